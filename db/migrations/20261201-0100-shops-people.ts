@@ -1,0 +1,62 @@
+import { createTables, type Migration } from './tables.ts';
+
+export const migration: Migration = createTables({
+  shops: `
+    id INT UNSIGNED NOT NULL AUTO_INCREMENT PRIMARY KEY,
+    name VARCHAR(190) NOT NULL DEFAULT '',
+    slug VARCHAR(60) NOT NULL DEFAULT '',
+    createdAt DATETIME(3) NOT NULL,
+    nextCaseNumber INT NOT NULL DEFAULT 1001,
+    UNIQUE KEY slug (slug)`,
+  yards: `
+    id INT UNSIGNED NOT NULL AUTO_INCREMENT PRIMARY KEY,
+    shopId INT UNSIGNED NOT NULL,
+    name VARCHAR(190) NOT NULL DEFAULT '',
+    UNIQUE KEY shopName (shopId, name),
+    FOREIGN KEY (shopId) REFERENCES shops (id)`,
+  users: `
+    id INT UNSIGNED NOT NULL AUTO_INCREMENT PRIMARY KEY,
+    shopId INT UNSIGNED NOT NULL,
+    email VARCHAR(190) NOT NULL DEFAULT '',
+    name VARCHAR(190) NOT NULL DEFAULT '',
+    passwordHash VARCHAR(190) NULL,
+    role VARCHAR(20) NOT NULL,
+    active TINYINT(1) NOT NULL DEFAULT 1,
+    preferences LONGTEXT NOT NULL DEFAULT '{}',
+    createdAt DATETIME(3) NOT NULL,
+    lastSeenAt DATETIME(3) NULL,
+    UNIQUE KEY email (email),
+    FOREIGN KEY (shopId) REFERENCES shops (id)`,
+  sessions: `
+    id VARCHAR(64) NOT NULL PRIMARY KEY,
+    userId INT UNSIGNED NOT NULL,
+    createdAt DATETIME(3) NOT NULL,
+    lastSeenAt DATETIME(3) NOT NULL,
+    expiresAt DATETIME(3) NOT NULL,
+    userAgent VARCHAR(190) NOT NULL DEFAULT '',
+    address VARCHAR(60) NOT NULL DEFAULT '',
+    FOREIGN KEY (userId) REFERENCES users (id) ON DELETE CASCADE`,
+  sign_in_failures: `
+    id VARCHAR(64) NOT NULL PRIMARY KEY,
+    failures INT NOT NULL DEFAULT 0,
+    lastAt DATETIME(3) NOT NULL`,
+  account_tokens: `
+    id VARCHAR(64) NOT NULL PRIMARY KEY,
+    userId INT UNSIGNED NOT NULL,
+    purpose VARCHAR(20) NOT NULL,
+    createdAt DATETIME(3) NOT NULL,
+    expiresAt DATETIME(3) NOT NULL,
+    usedAt DATETIME(3) NULL,
+    FOREIGN KEY (userId) REFERENCES users (id) ON DELETE CASCADE`,
+  api_tokens: `
+    id INT UNSIGNED NOT NULL AUTO_INCREMENT PRIMARY KEY,
+    userId INT UNSIGNED NOT NULL,
+    name VARCHAR(190) NOT NULL DEFAULT '',
+    hash CHAR(64) NOT NULL,
+    createdAt DATETIME(3) NOT NULL,
+    lastUsedAt DATETIME(3) NULL,
+    expiresAt DATETIME(3) NULL,
+    revokedAt DATETIME(3) NULL,
+    UNIQUE KEY hash (hash),
+    FOREIGN KEY (userId) REFERENCES users (id) ON DELETE CASCADE`,
+});

@@ -1,0 +1,33 @@
+import { createTables, type Migration } from './tables.ts';
+
+export const migration: Migration = createTables({
+  photos: `
+    id INT UNSIGNED NOT NULL AUTO_INCREMENT PRIMARY KEY,
+    shopId INT UNSIGNED NOT NULL,
+    caseId INT UNSIGNED NULL,
+    circuitId INT UNSIGNED NULL,
+    link VARCHAR(20) NOT NULL DEFAULT '',
+    role VARCHAR(20) NOT NULL,
+    caption TEXT NOT NULL DEFAULT '',
+    position INT NOT NULL DEFAULT 0,
+    objectKey VARCHAR(190) NOT NULL DEFAULT '',
+    contentType VARCHAR(60) NOT NULL DEFAULT '',
+    bytes INT NOT NULL,
+    width INT NOT NULL,
+    height INT NOT NULL,
+    sha256 CHAR(64) NOT NULL,
+    capturedAt DATETIME(3) NULL,
+    capturedAtSource VARCHAR(20) NOT NULL,
+    uploadedById INT UNSIGNED NULL,
+    uploadedByName VARCHAR(190) NOT NULL DEFAULT '',
+    uploadedAt DATETIME(3) NOT NULL,
+    deletedAt DATETIME(3) NULL,
+    deletedById INT UNSIGNED NULL,
+    UNIQUE KEY objectKey (objectKey),
+    KEY shopSha (shopId, sha256),
+    FOREIGN KEY (shopId) REFERENCES shops (id),
+    FOREIGN KEY (caseId) REFERENCES cases (id),
+    FOREIGN KEY (circuitId) REFERENCES circuits (id),
+    FOREIGN KEY (uploadedById) REFERENCES users (id),
+    FOREIGN KEY (deletedById) REFERENCES users (id)`,
+});
