@@ -1,0 +1,31 @@
+/** The row does not exist for this actor: it is missing or another shop's. Shown as 404. */
+export class NotFound extends Error {
+  override name = 'NotFound';
+}
+
+/** The row exists, the role may not do this. Shown as 403. */
+export class Forbidden extends Error {
+  override name = 'Forbidden';
+}
+
+/** Messages beside fields; the empty key is for the form as a whole. */
+export type FieldErrors = Record<string, string>;
+
+export type Refusal =
+  | { refused: 'fields'; fields: FieldErrors }
+  | { refused: 'conflict'; byName: string; at: string; theirs: Record<string, string> }
+  | { refused: 'gate'; gate: string; lacks: string[]; rule: string };
+
+export type Outcome<T = null> =
+  | ({ ok: true } & (T extends null ? { value?: null } : { value: T }))
+  | ({ ok: false } & Refusal);
+
+export function done(): Outcome;
+export function done<T>(value: T): Outcome<T>;
+export function done<T>(value?: T): unknown {
+  return value === undefined ? { ok: true } : { ok: true, value };
+}
+
+export function refuseFields(fields: FieldErrors): { ok: false } & Refusal {
+  return { ok: false, refused: 'fields', fields };
+}
