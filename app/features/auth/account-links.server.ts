@@ -63,7 +63,7 @@ export async function findAccountLink(token: string, purpose: Purpose, now: Date
 }
 
 /** Sets the password once; every session and every other link of the person ends. Answers null for a spent link. */
-export async function usePasswordLink(token: string, purpose: Purpose, password: string, now: Date) {
+export async function spendPasswordLink(token: string, purpose: Purpose, password: string, now: Date) {
   const passwordHash = await hashPassword(password);
   return transact(async (transaction) => {
     const row = await AccountToken.findByPk(hashToken(token), { transaction, lock: transaction.LOCK.UPDATE });

@@ -1,6 +1,6 @@
 import { data, redirect } from 'react-router';
 import { fieldErrors } from '#app/features/form-fields.ts';
-import { findAccountLink, usePasswordLink } from './account-links.server.ts';
+import { findAccountLink, spendPasswordLink } from './account-links.server.ts';
 import { newPasswordSchema } from './schema.ts';
 import { openSession } from './sessions.server.ts';
 import { clientAddress } from './sign-in.server.ts';
@@ -19,7 +19,7 @@ export async function choosePassword(request: Request, token: string, purpose: '
   const parsed = newPasswordSchema.safeParse(Object.fromEntries(await request.formData()));
   if (!parsed.success) return data({ fields: fieldErrors(parsed.error) }, { status: 400 });
   const now = new Date();
-  const used = await usePasswordLink(token, purpose, parsed.data.password, now);
+  const used = await spendPasswordLink(token, purpose, parsed.data.password, now);
   if (!used)
     return data(
       { fields: { '': 'This link has been used or is too old. Ask for a new one.' } },

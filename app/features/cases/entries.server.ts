@@ -1,0 +1,137 @@
+import type { Model, ModelStatic } from 'sequelize';
+import type { Actor } from '#app/domain/permissions/actor.ts';
+import { shopVocabulary } from '#app/features/catalogue/queries.server.ts';
+import { done, NotFound, type Outcome, refuseFields } from '#app/features/outcome.ts';
+import { Charge, Finding, Proof, Reading, RepairAction, TraceMethod } from '#db/models/index.ts';
+import { changeCase } from './change-case.server.ts';
+import { entryValues } from './entry-values.ts';
+import { ENTRY_LINKS, type EntryInput, type EntryKind } from './schema.ts';
+
+const MODELS: Record<EntryKind, ModelStatic<Model>> = {
+  reading: Reading,
+  method: TraceMethod,
+  finding: Finding,
+  repair: RepairAction,
+  proof: Proof,
+  charge: Charge,
+};
+
+const TIME_COLUMN: Record<EntryKind, string> = {
+  reading: 'takenAt',
+  method: 'at',
+  finding: 'at',
+  repair: 'at',
+  proof: 'at',
+  charge: 'at',
+};
+
+const NOT_NUMBERED = { byId: null, byName: '' };
+
+type Add<K extends EntryKind> = { actor: Actor; number: number; kind: K; input: EntryInput<K>; at?: Date };
+
+/** Adds an entry to its link. Two people may add at once: both are kept. */
+export async function addEntry<K extends EntryKind>({
+  actor,
+  number,
+  kind,
+  input,
+  at,
+}: Add<K>): Promise<Outcome<{ id: number }>> {
+  const vocabulary = await shopVocabulary(actor.shopId);
+  return changeCase<{ id: number }>({
+    actor,
+    number,
+    needs: 'case:edit',
+    link: ENTRY_LINKS[kind],
+    audit: { action: 'entry-added', detail: { kind, ...input } },
+    async change(row, transaction) {
+      const { values, fields } = entryValues(kind, input, { medium: row.medium, vocabulary });
+      if (Object.keys(fields).length > 0) return refuseFields(fields);
+      const created = await MODELS[kind].create(
+        {
+          ...NOT_NUMBERED,
+          ...values,
+          shopId: actor.shopId,
+          caseId: row.id,
+          byId: actor.userId,
+          byName: actor.name,
+          [TIME_COLUMN[kind]]: at ?? new Date(),
+        },
+        { transaction },
+      );
+      return done({ id: created.get('id') as number });
+    },
+  });
+}
+
+type ChangeEntry<K extends EntryKind> = Add<K> & { entryId: number; version: number | undefined };
+
+/** Changes an entry in place; its time and author stay, the change is in the history. */
+export async function changeEntry<K extends EntryKind>(options: ChangeEntry<K>): Promise<Outcome> {
+  const { actor, number, kind, entryId, version, input } = options;
+  const vocabulary = await shopVocabulary(actor.shopId);
+  return changeCase({
+    actor,
+    number,
+    needs: 'case:edit',
+    link: ENTRY_LINKS[kind],
+    version,
+    present: (row, transaction) => presentEntry(kind, entryId, row.id, transaction),
+    audit: { action: 'entry-changed', detail: { kind, entryId, ...input } },
+    async change(row, transaction) {
+      const { values, fields } = entryValues(kind, input, { medium: row.medium, vocabulary });
+      if (Object.keys(fields).length > 0) return refuseFields(fields);
+      const found = await MODELS[kind].findOne({ where: { id: entryId, caseId: row.id }, transaction });
+      if (!found) throw new NotFound();
+      await found.update(values, { transaction });
+      return done();
+    },
+  });
+}
+
+type RemoveEntry = { actor: Actor; number: number; kind: EntryKind; entryId: number };
+
+export async function removeEntry({ actor, number, kind, entryId }: RemoveEntry): Promise<Outcome> {
+  const removed: Record<string, unknown> = { kind, entryId };
+  return changeCase({
+    actor,
+    number,
+    needs: 'case:edit',
+    link: ENTRY_LINKS[kind],
+    audit: { action: 'entry-removed', detail: removed },
+    async change(row, transaction) {
+      const found = await MODELS[kind].findOne({ where: { id: entryId, caseId: row.id }, transaction });
+      if (!found) throw new NotFound();
+      removed.was = found.get({ plain: true });
+      await found.destroy({ transaction });
+      return done();
+    },
+  });
+}
+
+async function presentEntry(
+  kind: EntryKind,
+  entryId: number,
+  caseId: number,
+  transaction: Parameters<Parameters<typeof changeCase>[0]['change']>[1],
+): Promise<Record<string, string>> {
+  const found = await MODELS[kind].findOne({ where: { id: entryId, caseId }, transaction });
+  if (!found) return { '': 'It was removed.' };
+  const plain = found.get({ plain: true }) as Record<string, unknown>;
+  const hidden = new Set([
+    'id',
+    'shopId',
+    'caseId',
+    'byId',
+    'byName',
+    'at',
+    'takenAt',
+    'valueSi',
+    'amountSi',
+  ]);
+  return Object.fromEntries(
+    Object.entries(plain)
+      .filter(([name, value]) => !hidden.has(name) && value !== null && value !== '')
+      .map(([name, value]) => [name, String(value)]),
+  );
+}
