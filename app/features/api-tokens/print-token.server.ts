@@ -1,4 +1,6 @@
 import { parseArgs } from 'node:util';
+import { User } from '#db/models/index.ts';
+import { issueApiToken } from './tokens.server.ts';
 
 /** `npm run token -- --email someone@…`: prints a new API token for that person. Answers the exit code. */
 export async function printToken(args: string[]): Promise<number> {
@@ -11,8 +13,6 @@ export async function printToken(args: string[]): Promise<number> {
     process.stderr.write('Say for whom: npm run token -- --email someone@example\n');
     return 2;
   }
-  const { User } = await import('#db/models/index.ts');
-  const { issueApiToken } = await import('./tokens.server.ts');
   const user = await User.findOne({ where: { email: values.email.toLowerCase(), active: true } });
   if (!user) {
     process.stderr.write(`Nobody active here has the address ${values.email}.\n`);

@@ -1,0 +1,3 @@
+import { readEnvironment } from './environment.ts';
+
+export const env = readEnvironment(process.env);
