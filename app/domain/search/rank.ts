@@ -41,7 +41,12 @@ export function rank(
   return first.map((hit) => ({ ...hit, score: hit.score + (again.get(hit.id) ?? 0) })).sort(byScore);
 }
 
-function score(query: readonly Term[], candidates: readonly Candidate[], statistics: Statistics): Ranked[] {
+/** BM25 alone, without feedback. */
+export function score(
+  query: readonly Term[],
+  candidates: readonly Candidate[],
+  statistics: Statistics,
+): Ranked[] {
   const { k1, b } = RANKING;
   const weighed = query.map(({ term, weight }) => ({
     term,

@@ -5,7 +5,10 @@ import { issueApiToken } from './tokens.server.ts';
 
 /** The command `npm run token -- --email someone@…`: prints a new API token for that person. */
 async function printToken(): Promise<number> {
-  const options = { email: { type: 'string' }, name: { type: 'string', default: 'made on the command line' } } as const;
+  const options = {
+    email: { type: 'string' },
+    name: { type: 'string', default: 'made on the command line' },
+  } as const;
   const { email, name } = parseArgs({ options, strict: false }).values;
   if (typeof email !== 'string' || typeof name !== 'string') {
     process.stderr.write('Say for whom: npm run token -- --email someone@shop.example\n');
