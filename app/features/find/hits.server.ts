@@ -142,7 +142,7 @@ function whyFound(parts: readonly MarkedPart[], contributions: RankedCase['contr
 
 /** A passage as HTML text with <mark>, for the API. */
 export function markedHtml(parts: readonly MarkedPart[]): string {
-  const escape = (text: string) =>
+  const escaped = (text: string) =>
     text.replaceAll('&', '&amp;').replaceAll('<', '&lt;').replaceAll('>', '&gt;');
-  return parts.map(({ text, marked }) => (marked ? `<mark>${escape(text)}</mark>` : escape(text))).join('');
+  return parts.map(({ text, marked }) => (marked ? `<mark>${escaped(text)}</mark>` : escaped(text))).join('');
 }
