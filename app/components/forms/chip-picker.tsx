@@ -81,7 +81,9 @@ export function ChipPicker({ legend, name, chips, selected, hint, error, onChang
             </div>
           );
         })}
-        {asked.length > 0 && !chips.some(fits) && <p className="text-muted">Nothing fits. Try fewer letters.</p>}
+        {asked.length > 0 && !chips.some(fits) && (
+          <p className="text-muted">Nothing fits. Try fewer letters.</p>
+        )}
       </div>
       {error && (
         <p id={`${id}-error`} className="mt-1 font-semibold text-danger">

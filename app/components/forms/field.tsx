@@ -1,4 +1,11 @@
-import { type InputHTMLAttributes, type ReactNode, type TextareaHTMLAttributes, useEffect, useId, useRef } from 'react';
+import {
+  type InputHTMLAttributes,
+  type ReactNode,
+  type TextareaHTMLAttributes,
+  useEffect,
+  useId,
+  useRef,
+} from 'react';
 import type { FieldErrors } from '#app/features/outcome.ts';
 
 type Labelled = { label: string; hint?: ReactNode; error?: string; optional?: boolean };
@@ -14,9 +21,12 @@ function Field({
   error,
   optional,
   children,
-}: Labelled & { children: (ids: { id: string; describedBy: string | undefined; invalid: true | undefined }) => ReactNode }) {
+}: Labelled & {
+  children: (ids: { id: string; describedBy: string | undefined; invalid: true | undefined }) => ReactNode;
+}) {
   const id = useId();
-  const describedBy = [hint ? `${id}-hint` : '', error ? `${id}-error` : ''].filter(Boolean).join(' ') || undefined;
+  const describedBy =
+    [hint ? `${id}-hint` : '', error ? `${id}-error` : ''].filter(Boolean).join(' ') || undefined;
   return (
     <div>
       <label htmlFor={id} className="mb-1 block font-semibold">
@@ -89,7 +99,19 @@ type SelectProps = Labelled & {
   onChange?: (value: string) => void;
 };
 
-export function SelectField({ label, hint, error, optional, name, options, groups, blank, value, onChange, ...rest }: SelectProps) {
+export function SelectField({
+  label,
+  hint,
+  error,
+  optional,
+  name,
+  options,
+  groups,
+  blank,
+  value,
+  onChange,
+  ...rest
+}: SelectProps) {
   return (
     <Field label={label} hint={hint} error={error} optional={optional}>
       {({ id, describedBy, invalid }) => (
@@ -134,7 +156,16 @@ type MeasureProps = Labelled & {
 };
 
 /** A number as read, and the unit that the gauge shows. */
-export function MeasureField({ name, unitName, units, defaultValue, defaultUnit, unitError, error, ...labelled }: MeasureProps) {
+export function MeasureField({
+  name,
+  unitName,
+  units,
+  defaultValue,
+  defaultUnit,
+  unitError,
+  error,
+  ...labelled
+}: MeasureProps) {
   return (
     <Field {...labelled} error={error ?? unitError}>
       {({ id, describedBy, invalid }) => (
@@ -169,7 +200,13 @@ export function MeasureField({ name, unitName, units, defaultValue, defaultUnit,
   );
 }
 
-type CheckboxProps = { name: string; label: ReactNode; value?: string; defaultChecked?: boolean; hint?: string };
+type CheckboxProps = {
+  name: string;
+  label: ReactNode;
+  value?: string;
+  defaultChecked?: boolean;
+  hint?: string;
+};
 
 export function CheckboxField({ label, hint, ...input }: CheckboxProps) {
   return (

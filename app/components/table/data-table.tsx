@@ -32,7 +32,11 @@ export function DataTable<Row>({ caption, columns, rows, rowKey, sort }: Props<R
               className={`py-2 pr-4 text-sm font-semibold ${column.numeric ? 'text-right' : ''}`}
               aria-sort={sort?.by === column.key ? (sort.down ? 'descending' : 'ascending') : undefined}
             >
-              {column.sortable ? <SortLink column={column.key} label={column.label} sort={sort} /> : column.label}
+              {column.sortable ? (
+                <SortLink column={column.key} label={column.label} sort={sort} />
+              ) : (
+                column.label
+              )}
             </th>
           ))}
         </tr>
@@ -42,7 +46,11 @@ export function DataTable<Row>({ caption, columns, rows, rowKey, sort }: Props<R
           <tr key={rowKey(row)} className="border-b border-line align-top max-sm:block max-sm:py-3">
             {columns.map((column, place) =>
               place === 0 ? (
-                <th key={column.key} scope="row" className="py-3 pr-4 font-semibold max-sm:block max-sm:py-0.5">
+                <th
+                  key={column.key}
+                  scope="row"
+                  className="py-3 pr-4 font-semibold max-sm:block max-sm:py-0.5"
+                >
                   {column.cell(row)}
                 </th>
               ) : (
@@ -64,7 +72,15 @@ export function DataTable<Row>({ caption, columns, rows, rowKey, sort }: Props<R
   );
 }
 
-function SortLink({ column, label, sort }: { column: string; label: string; sort?: { by: string; down: boolean } }) {
+function SortLink({
+  column,
+  label,
+  sort,
+}: {
+  column: string;
+  label: string;
+  sort?: { by: string; down: boolean };
+}) {
   const [params] = useSearchParams();
   const next = new URLSearchParams(params);
   const active = sort?.by === column;
@@ -72,7 +88,11 @@ function SortLink({ column, label, sort }: { column: string; label: string; sort
   next.delete('page');
   const Arrow = sort?.down ? ArrowDown : ArrowUp;
   return (
-    <Link to={`?${next}`} className="inline-flex min-h-11 items-center gap-1 hover:text-action" preventScrollReset>
+    <Link
+      to={`?${next}`}
+      className="inline-flex min-h-11 items-center gap-1 hover:text-action"
+      preventScrollReset
+    >
       {label}
       {active && <Arrow className="size-4" aria-hidden />}
     </Link>

@@ -11,9 +11,19 @@ const LOOK: Record<Tone, string> = {
   danger: 'bg-danger-soft text-danger',
 };
 
-export function Badge({ tone = 'plain', icon, children }: { tone?: Tone; icon?: ReactNode; children: ReactNode }) {
+export function Badge({
+  tone = 'plain',
+  icon,
+  children,
+}: {
+  tone?: Tone;
+  icon?: ReactNode;
+  children: ReactNode;
+}) {
   return (
-    <span className={`inline-flex items-center gap-1.5 rounded-full px-2.5 py-0.5 text-sm font-semibold whitespace-nowrap ${LOOK[tone]}`}>
+    <span
+      className={`inline-flex items-center gap-1.5 rounded-full px-2.5 py-0.5 text-sm font-semibold whitespace-nowrap ${LOOK[tone]}`}
+    >
       {icon}
       {children}
     </span>
@@ -48,7 +58,14 @@ export function CaseStateBadge({ state }: { state: CaseState }) {
     <Badge
       tone={TONES[state]}
       icon={
-        <svg viewBox="0 0 12 12" className="size-3" fill="none" stroke="currentColor" strokeWidth="1.8" aria-hidden="true">
+        <svg
+          viewBox="0 0 12 12"
+          className="size-3"
+          fill="none"
+          stroke="currentColor"
+          strokeWidth="1.8"
+          aria-hidden="true"
+        >
           <path d={SHAPES[state]} />
         </svg>
       }

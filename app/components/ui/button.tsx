@@ -17,7 +17,15 @@ type Shared = { variant?: ButtonVariant; wide?: boolean; icon?: ReactNode };
 
 export type ButtonProps = ButtonHTMLAttributes<HTMLButtonElement> & Shared & { pending?: boolean };
 
-export function Button({ variant = 'primary', wide, icon, pending = false, children, className = '', ...rest }: ButtonProps) {
+export function Button({
+  variant = 'primary',
+  wide,
+  icon,
+  pending = false,
+  children,
+  className = '',
+  ...rest
+}: ButtonProps) {
   return (
     <button
       {...rest}
@@ -27,14 +35,26 @@ export function Button({ variant = 'primary', wide, icon, pending = false, child
     >
       {icon}
       {children}
-      {pending && <span className="size-4 animate-spin rounded-full border-2 border-current border-t-transparent" aria-hidden />}
+      {pending && (
+        <span
+          className="size-4 animate-spin rounded-full border-2 border-current border-t-transparent"
+          aria-hidden
+        />
+      )}
     </button>
   );
 }
 
 export type ButtonLinkProps = LinkProps & Shared;
 
-export function ButtonLink({ variant = 'secondary', wide, icon, children, className = '', ...rest }: ButtonLinkProps) {
+export function ButtonLink({
+  variant = 'secondary',
+  wide,
+  icon,
+  children,
+  className = '',
+  ...rest
+}: ButtonLinkProps) {
   return (
     <Link {...rest} className={`${SHAPE} ${LOOK[variant]} ${wide ? 'w-full' : ''} ${className}`}>
       {icon}

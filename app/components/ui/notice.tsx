@@ -15,7 +15,10 @@ type Props = { tone?: Tone; title?: string; alert?: boolean; children?: ReactNod
 export function Notice({ tone = 'info', title, alert, children }: Props) {
   const Icon = ICONS[tone];
   return (
-    <div role={alert ? 'alert' : undefined} className={`flex gap-3 rounded-r-lg border-l-4 px-4 py-3 ${LOOK[tone]}`}>
+    <div
+      role={alert ? 'alert' : undefined}
+      className={`flex gap-3 rounded-r-lg border-l-4 px-4 py-3 ${LOOK[tone]}`}
+    >
       <Icon className="mt-0.5 size-5 shrink-0" aria-hidden />
       <div className="min-w-0 space-y-1 break-words">
         {title && <p className="font-semibold">{title}</p>}
@@ -32,9 +35,7 @@ export function Cautions({ cautions, open = false }: { cautions: readonly Cautio
     <details open={open} className="rounded-r-lg border-l-4 border-warn bg-warn-soft print:hidden">
       <summary className="tap flex items-center gap-3 px-4 py-2 font-semibold">
         <TriangleAlert className="size-5 shrink-0" aria-hidden />
-        <span>
-          Before you start: {cautions.map(({ title }) => title.toLowerCase()).join(' · ')}
-        </span>
+        <span>Before you start: {cautions.map(({ title }) => title.toLowerCase()).join(' · ')}</span>
       </summary>
       <ul className="space-y-3 px-4 pt-1 pb-4">
         {cautions.map(({ id, title, text }) => (

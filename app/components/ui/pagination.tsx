@@ -10,9 +10,13 @@ export function Pagination({ page, pageCount, noun }: { page: number; pageCount:
     next.set('page', String(target));
     return `?${next}`;
   };
-  const look = 'tap inline-flex items-center gap-1 rounded-lg border border-edge px-3 font-semibold hover:border-action';
+  const look =
+    'tap inline-flex items-center gap-1 rounded-lg border border-edge px-3 font-semibold hover:border-action';
   return (
-    <nav aria-label={`Pages of ${noun}`} className="mt-6 flex items-center justify-between gap-3 print:hidden">
+    <nav
+      aria-label={`Pages of ${noun}`}
+      className="mt-6 flex items-center justify-between gap-3 print:hidden"
+    >
       {page > 1 ? (
         <Link to={to(page - 1)} className={look} rel="prev">
           <ChevronLeft className="size-5" aria-hidden />

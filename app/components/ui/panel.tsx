@@ -6,7 +6,11 @@ type Props = { title?: string; lead?: ReactNode; actions?: ReactNode; id?: strin
 export function Panel({ title, lead, actions, id, children }: Props) {
   const heading = useId();
   return (
-    <section id={id} aria-labelledby={title ? heading : undefined} className="scroll-mt-24 border-t border-line pt-5">
+    <section
+      id={id}
+      aria-labelledby={title ? heading : undefined}
+      className="scroll-mt-24 border-t border-line pt-5"
+    >
       {title && (
         <div className="mb-4 flex flex-wrap items-baseline justify-between gap-3">
           <div>

@@ -1,4 +1,9 @@
-const DAY = new Intl.DateTimeFormat('en-GB', { day: 'numeric', month: 'short', year: 'numeric', timeZone: 'UTC' });
+const DAY = new Intl.DateTimeFormat('en-GB', {
+  day: 'numeric',
+  month: 'short',
+  year: 'numeric',
+  timeZone: 'UTC',
+});
 const MINUTE = new Intl.DateTimeFormat('en-GB', {
   day: 'numeric',
   month: 'short',

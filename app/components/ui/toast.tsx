@@ -12,7 +12,11 @@ export function ToastMessage({ toast }: { toast: ToastContent | null }) {
         <div className="mb-5 flex items-center gap-3 rounded-lg border border-line bg-raised py-1 pr-1 pl-4">
           <Check className="size-5 shrink-0 text-action" aria-hidden />
           <p className="min-w-0 flex-1 break-words">{toast.text}</p>
-          <button type="button" className="tap grid place-items-center rounded-lg" onClick={() => setClosed(toast)}>
+          <button
+            type="button"
+            className="tap grid place-items-center rounded-lg"
+            onClick={() => setClosed(toast)}
+          >
             <X className="size-5" aria-hidden />
             <span className="sr-only">Close this message</span>
           </button>
