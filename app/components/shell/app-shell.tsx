@@ -128,7 +128,9 @@ function Account({ viewer, scheme }: Pick<Props, 'viewer' | 'scheme'>) {
       </p>
       <SchemeSwitch scheme={scheme} />
       <Form method="post" action="/sign-out">
-        <button className="tap w-full rounded-lg px-2 text-left text-action hover:bg-raised">Sign out</button>
+        <button type="submit" className="tap w-full rounded-lg px-2 text-left text-action hover:bg-raised">
+          Sign out
+        </button>
       </Form>
     </div>
   );

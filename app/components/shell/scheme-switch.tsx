@@ -16,6 +16,7 @@ export function SchemeSwitch({ scheme }: { scheme: Scheme }) {
       <input type="hidden" name="to" value={`${pathname}${search}`} />
       {CHOICES.map(({ value, label, Icon }) => (
         <button
+          type="submit"
           key={value}
           name="scheme"
           value={value}
