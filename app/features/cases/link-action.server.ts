@@ -23,10 +23,11 @@ export async function handleLinkAction({ viewer, number, link, form }: Args) {
   const intent = String(form.get('intent') ?? '');
   const typed = typedValues(form);
   if (intent === 'notes') {
-    const { note, version } = notesSchema.parse({
-      note: String(form.get('note') ?? '').slice(0, 20_000),
-      version: form.get('version') ?? undefined,
-    });
+    const parsed = notesSchema.safeParse(formObject(form));
+    if (!parsed.success) {
+      return answer(refuseFields(fieldErrors(parsed.error)), { form: 'notes', typed }, number, link, '');
+    }
+    const { note, version } = parsed.data;
     const outcome = await orRefuse(saveNotes({ actor: viewer, number }, link, note, version));
     return answer(outcome, { form: 'notes', typed }, number, link, 'Notes saved.');
   }

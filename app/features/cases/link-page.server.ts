@@ -1,0 +1,41 @@
+import type { RouterContextProvider } from 'react-router';
+import { may } from '#app/domain/permissions/matrix.ts';
+import { cautionsFor, usualProofs } from '#app/domain/vocabulary/vocabulary.ts';
+import { listCasePhotos } from '#app/features/photos/queries.server.ts';
+import { orRefuse, requireActor, wholeParam } from '#app/server/guards.server.ts';
+import { linkChoices } from './choices.ts';
+import { handleLinkAction } from './link-action.server.ts';
+import { loadLinks } from './link-views.server.ts';
+import type { NotedLink } from './schema.ts';
+
+type Args = { request: Request; context: Readonly<RouterContextProvider>; params: { number: string } };
+
+/** What the pages for readings, trace, repair, proof and charge show. */
+export async function linkLoader({ context, params }: Args, link: NotedLink) {
+  const viewer = requireActor(context);
+  const number = wholeParam(params.number);
+  const { row, vocabulary, view } = await orRefuse(loadLinks(viewer, number));
+  const photos = await listCasePhotos(viewer, number);
+  return {
+    number,
+    medium: row.medium,
+    links: view,
+    lacks: row.chain.find(({ key }) => key === link)?.lacks ?? [],
+    choices: linkChoices(vocabulary, row.medium, viewer.preferences),
+    mayEdit: may(viewer.role, 'case:edit'),
+    photos: { ...photos, photos: photos.photos.filter((photo) => photo.link === link) },
+    cautions: link === 'readings' ? [] : cautionsFor(link, row.medium),
+    usualProofs: link === 'proof' ? usualProofs(row.medium) : [],
+    backToWorkAt: row.backToWorkAt?.toISOString() ?? null,
+  };
+}
+
+export async function linkAction({ request, context, params }: Args, link: NotedLink) {
+  const viewer = requireActor(context);
+  return handleLinkAction({
+    viewer,
+    number: wholeParam(params.number),
+    link,
+    form: await request.formData(),
+  });
+}

@@ -1,0 +1,88 @@
+import { useSearchParams } from 'react-router';
+import { PhotoSection } from '#app/components/photos/photo-section.tsx';
+import { Cautions, Notice } from '#app/components/ui/notice.tsx';
+import { Facts, Panel } from '#app/components/ui/panel.tsx';
+import { BackToWork } from '#app/features/cases/components/back-to-work.tsx';
+import { AddEntry, EntryList } from '#app/features/cases/components/entries.tsx';
+import { LinkFrame } from '#app/features/cases/components/link-frame.tsx';
+import { NotesForm } from '#app/features/cases/components/notes-form.tsx';
+import { editedEntry } from '#app/features/cases/edited-entry.ts';
+import { linkAction, linkLoader } from '#app/features/cases/link-page.server.ts';
+import type { Route } from './+types/charge.ts';
+
+export const loader = (args: Route.LoaderArgs) => linkLoader(args, 'charge');
+export const action = (args: Route.ActionArgs) => linkAction(args, 'charge');
+
+export default function Charge({ loaderData, actionData }: Route.ComponentProps) {
+  const { links, choices, mayEdit, photos, number, cautions } = loaderData;
+  const editing = editedEntry(useSearchParams()[0], 'charge');
+  const shared = { choices, version: links.versions.charge ?? 1, actionData };
+  return (
+    <LinkFrame link="charge" lacks={loaderData.lacks}>
+      <Cautions cautions={cautions} />
+      <Facts
+        columns={3}
+        facts={[
+          {
+            label: 'Plate says',
+            value: [links.plate.refrigerant, links.plate.charge].filter(Boolean).join(', '),
+          },
+          { label: 'Oil', value: links.plate.oil },
+          { label: 'Service ports', value: links.plate.ports },
+        ]}
+      />
+      {!links.provedTight && (
+        <Notice tone="warn" title="Not proved tight">
+          <p>
+            The newest proof is missing, older than the newest repair, or not tight. Prove the circuit tight
+            before any fluid goes back.
+          </p>
+        </Notice>
+      )}
+      <Panel
+        title="Charge"
+        lead="What came out and what went in, from which cylinder or can, against what the plate says."
+      >
+        <EntryList
+          kind="charge"
+          entries={links.charges}
+          editing={editing}
+          mayEdit={mayEdit}
+          empty="Nothing recorded yet."
+          {...shared}
+        />
+        {mayEdit && (
+          <AddEntry
+            kind="charge"
+            title="Add what went in or came out"
+            count={links.charges.length}
+            open={links.charges.length === 0}
+            {...shared}
+          />
+        )}
+      </Panel>
+      <Panel title="In words">
+        <NotesForm
+          label="Notes on the charge"
+          note={links.notes.charge}
+          version={shared.version}
+          mayEdit={mayEdit}
+          actionData={actionData}
+        />
+      </Panel>
+      <PhotoSection
+        title="Photos of gauges and scales"
+        caseNumber={number}
+        link="charge"
+        role="gauge"
+        photos={photos}
+      />
+      <BackToWork
+        number={number}
+        backToWorkAt={loaderData.backToWorkAt}
+        provedTight={links.provedTight}
+        mayEdit={mayEdit}
+      />
+    </LinkFrame>
+  );
+}

@@ -1,0 +1,71 @@
+import { useSearchParams } from 'react-router';
+import { PhotoSection } from '#app/components/photos/photo-section.tsx';
+import { Cautions } from '#app/components/ui/notice.tsx';
+import { Panel } from '#app/components/ui/panel.tsx';
+import { AddEntry, EntryList } from '#app/features/cases/components/entries.tsx';
+import { LinkFrame } from '#app/features/cases/components/link-frame.tsx';
+import { NotesForm } from '#app/features/cases/components/notes-form.tsx';
+import { editedEntry } from '#app/features/cases/edited-entry.ts';
+import { linkAction, linkLoader } from '#app/features/cases/link-page.server.ts';
+import type { Route } from './+types/proof.ts';
+
+export const loader = (args: Route.LoaderArgs) => linkLoader(args, 'proof');
+export const action = (args: Route.ActionArgs) => linkAction(args, 'proof');
+
+export default function Proof({ loaderData, actionData }: Route.ComponentProps) {
+  const { links, choices, mayEdit, photos, number, cautions } = loaderData;
+  const editing = editedEntry(useSearchParams()[0], 'proof');
+  const shared = { choices, version: links.versions.proof ?? 1, actionData };
+  return (
+    <LinkFrame link="proof" lacks={loaderData.lacks}>
+      <Cautions cautions={cautions} />
+      {loaderData.usualProofs.length > 0 && (
+        <details>
+          <summary className="tap flex items-center font-semibold text-action">
+            What usually proves this medium (common practice, no source)
+          </summary>
+          <ul className="list-disc space-y-1 pl-6">
+            {loaderData.usualProofs.map((proof) => (
+              <li key={proof}>{proof}</li>
+            ))}
+          </ul>
+        </details>
+      )}
+      <Panel title="Proof" lead="The test that shows the circuit tight, before any fluid goes back.">
+        <EntryList
+          kind="proof"
+          entries={links.proofs}
+          editing={editing}
+          mayEdit={mayEdit}
+          empty="No test yet."
+          {...shared}
+        />
+        {mayEdit && (
+          <AddEntry
+            kind="proof"
+            title="Add a test"
+            count={links.proofs.length}
+            open={links.proofs.length === 0}
+            {...shared}
+          />
+        )}
+      </Panel>
+      <Panel title="In words">
+        <NotesForm
+          label="Notes on the proof"
+          note={links.notes.proof}
+          version={shared.version}
+          mayEdit={mayEdit}
+          actionData={actionData}
+        />
+      </Panel>
+      <PhotoSection
+        title="Gauge photos of the test"
+        caseNumber={number}
+        link="proof"
+        role="gauge"
+        photos={photos}
+      />
+    </LinkFrame>
+  );
+}
