@@ -74,7 +74,7 @@ export default function Charge({ loaderData, actionData }: Route.ComponentProps)
         title="Photos of gauges and scales"
         caseNumber={number}
         link="charge"
-        role="gauge"
+        photoRole="gauge"
         photos={photos}
       />
       <BackToWork

@@ -63,7 +63,7 @@ export default function Proof({ loaderData, actionData }: Route.ComponentProps) 
         title="Gauge photos of the test"
         caseNumber={number}
         link="proof"
-        role="gauge"
+        photoRole="gauge"
         photos={photos}
       />
     </LinkFrame>

@@ -48,7 +48,13 @@ export default function Readings({ loaderData, actionData }: Route.ComponentProp
           actionData={actionData}
         />
       </Panel>
-      <PhotoSection title="Gauge photos" caseNumber={number} link="readings" role="gauge" photos={photos} />
+      <PhotoSection
+        title="Gauge photos"
+        caseNumber={number}
+        link="readings"
+        photoRole="gauge"
+        photos={photos}
+      />
     </LinkFrame>
   );
 }

@@ -54,7 +54,7 @@ export default function Repair({ loaderData, actionData }: Route.ComponentProps)
         title="Photos of the part and the repair"
         caseNumber={number}
         link="repair"
-        role="part"
+        photoRole="part"
         photos={photos}
       />
     </LinkFrame>

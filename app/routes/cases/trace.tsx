@@ -77,7 +77,13 @@ export default function Trace({ loaderData, actionData }: Route.ComponentProps) 
           </div>
         )}
       </Panel>
-      <PhotoSection title="Photos of the spot" caseNumber={number} link="trace" role="uv" photos={photos} />
+      <PhotoSection
+        title="Photos of the spot"
+        caseNumber={number}
+        link="trace"
+        photoRole="uv"
+        photos={photos}
+      />
       <Panel title="In words">
         <NotesForm
           label="Notes on the trace"
