@@ -156,3 +156,31 @@ export async function listCircuitChoices(actor: Actor, machineId: number) {
     label: `${label || nameOf(vocabulary, 'circuit', place)}, ${mediumName(vocabulary, medium).toLowerCase()}`,
   }));
 }
+
+/** Every machine's circuits under its number in lower case, for the form that opens a case. */
+export async function listCircuitsByMachine(actor: Actor) {
+  const rows = await sequelize.query<{
+    number: string;
+    id: number;
+    label: string;
+    place: string;
+    medium: string;
+  }>(
+    `SELECT m.number, c.id, c.label, c.place, c.medium FROM circuits c JOIN machines m ON m.id = c.machineId
+      WHERE c.shopId = :shopId ORDER BY c.id LIMIT 5000`,
+    { replacements: { shopId: actor.shopId }, type: QueryTypes.SELECT },
+  );
+  const vocabulary = await shopVocabulary(actor.shopId);
+  const byMachine: Record<string, { value: string; label: string; medium: string }[]> = {};
+  for (const { number, id, label, place, medium } of rows) {
+    const circuits = byMachine[number.toLowerCase()] ?? [];
+    const name = label || nameOf(vocabulary, 'circuit', place);
+    circuits.push({
+      value: String(id),
+      label: `${name}, ${mediumName(vocabulary, medium).toLowerCase()}`,
+      medium,
+    });
+    byMachine[number.toLowerCase()] = circuits;
+  }
+  return byMachine;
+}
