@@ -1,7 +1,7 @@
 import { useEffect, useRef } from 'react';
 import { useFetcher } from 'react-router';
+import type { AlikeHit } from '#app/features/find/alike.server.ts';
 import { AlikeList } from '#app/features/find/components/alike-list.tsx';
-import type { loader } from '#app/routes/resources/alike.ts';
 
 type Props = { text: string; symptoms: string; medium: string; machine: string };
 
@@ -10,7 +10,7 @@ const ENOUGH_LETTERS = 6;
 
 /** Alike solved cases beside a complaint that is being written; it asks a moment after the last key. */
 export function AlikeWhileTyping({ text, symptoms, medium, machine }: Props) {
-  const { load, data, state } = useFetcher<typeof loader>();
+  const { load, data, state } = useFetcher<{ hits: AlikeHit[] }>();
   const asked = useRef('');
   useEffect(() => {
     if (text.trim().length < ENOUGH_LETTERS && symptoms === '') return;
