@@ -1,5 +1,5 @@
-import { data, Form, Link, useNavigation } from 'react-router';
-import { SelectField, TextArea, TextField } from '#app/components/forms/field.tsx';
+import { Form, Link, useNavigation } from 'react-router';
+import { TextArea, TextField } from '#app/components/forms/field.tsx';
 import { PhotoStrip } from '#app/components/photos/photo-strip.tsx';
 import { Button, ButtonLink } from '#app/components/ui/button.tsx';
 import { Facts, Panel } from '#app/components/ui/panel.tsx';
