@@ -65,19 +65,7 @@ export async function saveWriteUp(target: Target, input: WriteUpInput, now: Date
       const photoIds = await ownPhotos(row.id, input.photos, transaction);
       const values = { title: input.title, body: input.body, photoIds, updatedAt: now };
       if (!note) {
-        const slug = await freeSlug(row, input.title, transaction);
-        await WriteUp.create(
-          {
-            ...values,
-            shopId: row.shopId,
-            caseId: row.id,
-            slug,
-            authorId: actor.userId,
-            authorName: actor.name,
-            createdAt: now,
-          },
-          { transaction },
-        );
+        await createNote(actor, row, input, now, transaction);
         return done();
       }
       if (input.version !== undefined && input.version !== note.version)
@@ -88,6 +76,30 @@ export async function saveWriteUp(target: Target, input: WriteUpInput, now: Date
       await note.update({ ...values, version: note.version + 1 }, { transaction });
       return done();
     },
+  );
+}
+
+async function createNote(
+  actor: Actor,
+  row: Case,
+  { title, body, photos }: WriteUpInput,
+  now: Date,
+  transaction: Transaction,
+): Promise<WriteUp> {
+  return WriteUp.create(
+    {
+      title,
+      body,
+      photoIds: await ownPhotos(row.id, photos, transaction),
+      shopId: row.shopId,
+      caseId: row.id,
+      slug: await freeSlug(row, title, transaction),
+      authorId: actor.userId,
+      authorName: actor.name,
+      createdAt: now,
+      updatedAt: now,
+    },
+    { transaction },
   );
 }
 
@@ -188,12 +200,13 @@ export async function publishWriteUp(
     'write-up:review',
     'note-published',
     detail,
-    async (row, note, transaction) => {
-      if (!note) return refuseFields({ '': 'Write and save the note first.' });
-      const state = nextWriteUpState(note.state, 'publish');
+    async (row, found, transaction) => {
+      if (!found && !input) return refuseFields({ '': 'Write the note first.' });
+      const state = found ? nextWriteUpState(found.state, 'publish') : 'published';
       if (!state) return refuseFields({ '': 'This note cannot be published as it stands.' });
-      if (input?.version !== undefined && input.version !== note.version)
-        return conflict(row, note, transaction);
+      if (found && input?.version !== undefined && input.version !== found.version) {
+        return conflict(row, found, transaction);
+      }
       const record = caseRecord(row, await loadEvidence(row.id, transaction));
       const lacks = [...lackingForCause(record), ...lackingForCure(record)];
       if (lacks.length > 0) {
@@ -201,6 +214,7 @@ export async function publishWriteUp(
         if (refused) return refused;
         detail.override = override;
       }
+      const note = found ?? (await createNote(actor, row, input as WriteUpInput, now, transaction));
       const photoIds = input ? await ownPhotos(row.id, input.photos, transaction) : note.photoIds;
       const text = { title: input?.title ?? note.title, body: input?.body ?? note.body, photoIds };
       await note.update(

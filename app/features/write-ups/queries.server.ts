@@ -1,5 +1,5 @@
 import { diffWordsWithSpace } from 'diff';
-import { Op, QueryTypes } from 'sequelize';
+import { QueryTypes } from 'sequelize';
 import { lackingForCause, lackingForCure } from '#app/domain/chain/chain.ts';
 import type { Actor } from '#app/domain/permissions/actor.ts';
 import { may } from '#app/domain/permissions/matrix.ts';
@@ -178,9 +178,4 @@ function changesBetween(before: WriteUpRevision, after: WriteUpRevision): Change
       { text: text(after), kind: 'added' },
     ]
   );
-}
-
-/** How many published notes of the shop have flags without an answer. */
-export async function countOpenFlags(actor: Actor): Promise<number> {
-  return WriteUpFlag.count({ where: { shopId: actor.shopId, answeredAt: { [Op.is]: null } } });
 }
