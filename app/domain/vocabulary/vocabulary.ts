@@ -137,6 +137,11 @@ export function nameOf(vocabulary: Vocabulary, kind: CatalogueKind, id: string):
   return entry(vocabulary, kind, id)?.name ?? capital(spelledOut(id));
 }
 
+/** The names of a medium's parts by id, for the circuit drawing. */
+export function partNames(vocabulary: Vocabulary, medium: string): Record<string, string> {
+  return Object.fromEntries(entriesFor(vocabulary, 'component', medium).map(({ id, name }) => [id, name]));
+}
+
 /** A medium's name without what stands in brackets. */
 export function mediumName(vocabulary: Vocabulary, id: string): string {
   return nameOf(vocabulary, 'medium', id).replace(/\s*\(.*\)$/, '');

@@ -24,3 +24,23 @@ export async function shopVocabulary(shopId: number, transaction?: Transaction):
     })),
   );
 }
+
+/** A kind of the catalogue as the admin sees it: hidden entries too, with the shop's own further names apart. */
+export async function listCatalogue(shopId: number, kind: CatalogueKind) {
+  const vocabulary = await shopVocabulary(shopId);
+  const rows = await CatalogueEntry.findAll({ where: { shopId, kind } });
+  const own = new Map(rows.map((row) => [row.entryId, row]));
+  return [...(vocabulary.get(kind)?.values() ?? [])].map(
+    ({ id, name, media, otherNames, note, own: isOwn, hidden }) => ({
+      id,
+      name,
+      media: [...media],
+      note,
+      hidden,
+      isOwn,
+      otherNames:
+        baseVocabulary.get(kind)?.get(id)?.otherNames.join(', ') ?? (isOwn ? '' : otherNames.join(', ')),
+      ownNames: own.get(id)?.otherNames.join(', ') ?? '',
+    }),
+  );
+}

@@ -1,0 +1,130 @@
+import { data, Form, useNavigation } from 'react-router';
+import { RadioCards, TextField } from '#app/components/forms/field.tsx';
+import { Button } from '#app/components/ui/button.tsx';
+import { PageHeader } from '#app/components/ui/page-header.tsx';
+import { Panel } from '#app/components/ui/panel.tsx';
+import { DateTime } from '#app/components/ui/time.tsx';
+import { ROLE_NAMES, ROLES } from '#app/domain/permissions/actor.ts';
+import { RefusalNotice } from '#app/features/cases/components/refusal-notice.tsx';
+import { fieldErrors, formObject } from '#app/features/form-fields.ts';
+import { type Outcome, refuseFields } from '#app/features/outcome.ts';
+import {
+  changePerson,
+  endPersonSessions,
+  inviteAgain,
+  loadPerson,
+  setActive,
+} from '#app/features/people/people.server.ts';
+import { changePersonSchema } from '#app/features/people/schema.ts';
+import { orRefuse, requirePermission, wholeParam } from '#app/server/guards.server.ts';
+import { redirectWithToast } from '#app/server/redirects.server.ts';
+import type { Route } from './+types/person.ts';
+
+export const meta: Route.MetaFunction = ({ loaderData }) => [
+  { title: `${loaderData?.person.name ?? 'Person'} · Weepmark` },
+];
+
+export async function loader({ context, params }: Route.LoaderArgs) {
+  const viewer = requirePermission(context, 'people:manage');
+  return { person: await orRefuse(loadPerson(viewer, wholeParam(params.id), new Date())) };
+}
+
+export async function action({ request, context, params }: Route.ActionArgs) {
+  const viewer = requirePermission(context, 'people:manage');
+  const userId = wholeParam(params.id);
+  const form = await request.formData();
+  const intent = String(form.get('intent') ?? '');
+  const outcome = await orRefuse(run());
+  if (outcome.ok) return redirectWithToast(`/people/${userId}`, SAID[intent] ?? 'Saved.');
+  return data({ refusal: outcome }, { status: 400 });
+
+  async function run(): Promise<Outcome> {
+    switch (intent) {
+      case 'change': {
+        const parsed = changePersonSchema.safeParse(formObject(form));
+        return parsed.success
+          ? changePerson(viewer, userId, parsed.data)
+          : refuseFields(fieldErrors(parsed.error));
+      }
+      case 'deactivate':
+        return setActive(viewer, userId, false, new Date());
+      case 'activate':
+        return setActive(viewer, userId, true, new Date());
+      case 'end-sessions':
+        return endPersonSessions(viewer, userId);
+      case 'invite':
+        return inviteAgain(viewer, userId, new Date());
+      default:
+        throw data(null, { status: 400 });
+    }
+  }
+}
+
+const SAID: Record<string, string> = {
+  change: 'Saved.',
+  deactivate: 'Deactivated. Their sessions and tokens have ended.',
+  activate: 'Active again.',
+  'end-sessions': 'Their sessions have ended.',
+  invite: 'The link was mailed again.',
+};
+
+export default function Person({ loaderData: { person }, actionData }: Route.ComponentProps) {
+  const intent = useNavigation().formData?.get('intent');
+  const refusal = actionData?.refusal;
+  const errors = refusal?.refused === 'fields' ? refusal.fields : {};
+  return (
+    <div className="max-w-2xl space-y-8">
+      <PageHeader
+        title={person.name}
+        lead={
+          <>
+            {person.email}
+            {person.lastSeenAt && (
+              <>
+                , last seen <DateTime value={person.lastSeenAt} />
+              </>
+            )}
+          </>
+        }
+      />
+      <RefusalNotice refusal={refusal} />
+      <Form method="post" className="space-y-5" noValidate>
+        <TextField name="name" label="Name" defaultValue={person.name} error={errors.name} />
+        <RadioCards
+          legend="Role"
+          name="role"
+          options={ROLES.map((value) => ({ value, label: ROLE_NAMES[value] }))}
+          defaultValue={person.role}
+          error={errors.role}
+        />
+        <Button name="intent" value="change" pending={intent === 'change'}>
+          Save
+        </Button>
+      </Form>
+      <Panel
+        title="Access"
+        lead={`${person.sessions} ${person.sessions === 1 ? 'session' : 'sessions'} open${person.self ? ', one of them yours' : ''}.`}
+      >
+        <Form method="post" className="flex flex-wrap gap-2">
+          <Button name="intent" value="end-sessions" variant="secondary" pending={intent === 'end-sessions'}>
+            End all sessions
+          </Button>
+          {person.active && !person.joined && (
+            <Button name="intent" value="invite" variant="secondary" pending={intent === 'invite'}>
+              Mail the link again
+            </Button>
+          )}
+          {person.active ? (
+            <Button name="intent" value="deactivate" variant="danger" pending={intent === 'deactivate'}>
+              Deactivate
+            </Button>
+          ) : (
+            <Button name="intent" value="activate" variant="secondary" pending={intent === 'activate'}>
+              Make active again
+            </Button>
+          )}
+        </Form>
+      </Panel>
+    </div>
+  );
+}

@@ -1,0 +1,77 @@
+import { Link } from 'react-router';
+import { CircuitDrawing } from '#app/components/drawing/circuit-drawing.tsx';
+import { PageHeader } from '#app/components/ui/page-header.tsx';
+import { Panel } from '#app/components/ui/panel.tsx';
+import { entriesFor, methodFacts, partNames } from '#app/domain/vocabulary/vocabulary.ts';
+import { shopVocabulary } from '#app/features/catalogue/queries.server.ts';
+import { requireActor } from '#app/server/guards.server.ts';
+import type { Route } from './+types/reference.ts';
+
+export const meta: Route.MetaFunction = () => [{ title: 'Reference · Weepmark' }];
+
+export async function loader({ context }: Route.LoaderArgs) {
+  const vocabulary = await shopVocabulary(requireActor(context).shopId);
+  return {
+    names: partNames(vocabulary, 'refrigerant'),
+    methods: entriesFor(vocabulary, 'method').map(({ id, name }) => ({
+      id,
+      name,
+      facts: methodFacts(id) ?? null,
+    })),
+  };
+}
+
+export default function Reference({ loaderData: { names, methods } }: Route.ComponentProps) {
+  return (
+    <div className="space-y-8">
+      <PageHeader title="Reference" lead="What to have at hand beside the machine." />
+      <ul className="grid gap-3 sm:grid-cols-2">
+        <li>
+          <Link
+            to="cautions"
+            className="block rounded-xl border border-line bg-surface p-4 hover:border-action"
+          >
+            <span className="block text-lg font-semibold">Cautions</span>
+            <span className="text-muted">What hurts people in this work, and how not to be one of them.</span>
+          </Link>
+        </li>
+        <li>
+          <Link
+            to="glossary"
+            className="block rounded-xl border border-line bg-surface p-4 hover:border-action"
+          >
+            <span className="block text-lg font-semibold">Glossary</span>
+            <span className="text-muted">The words of the trade, and which of them mean the same.</span>
+          </Link>
+        </li>
+      </ul>
+      <Panel
+        title="Methods"
+        lead="What each can and cannot find. Rules of thumb, marked for what they rest on; not standards."
+      >
+        <ul className="grid gap-x-8 gap-y-6 sm:grid-cols-2">
+          {methods.map(({ id, name, facts }) => (
+            <li key={id}>
+              <h3 className="font-semibold">{name}</h3>
+              {facts && (
+                <>
+                  <p>Finds: {facts.canFind}.</p>
+                  <p>Misses: {facts.cannotFind}.</p>
+                  <p className="text-sm text-muted">
+                    {facts.sensitivity} ({facts.basis}).
+                  </p>
+                </>
+              )}
+            </li>
+          ))}
+        </ul>
+      </Panel>
+      <Panel
+        title="A refrigerant circuit"
+        lead="The common arrangement (common practice, no source). Yours may differ: the maker’s drawing comes first."
+      >
+        <CircuitDrawing names={names} />
+      </Panel>
+    </div>
+  );
+}
