@@ -13,7 +13,9 @@ const COMMANDS: Record<string, (args: string[]) => Promise<void>> = {
   dev,
   'reset-demo': resetDemo,
   token: (args) =>
-    withServices((environment) => runScript('app/features/api-tokens/print-token.server.ts', args, environment)),
+    withServices((environment) =>
+      runScript('app/features/api-tokens/print-token.server.ts', args, environment),
+    ),
   'storage-check': (args) => withServices((environment) => runScript('storage/check.ts', args, environment)),
   bench: (args) => withServices((environment) => runScript('tests/bench/run.ts', args, environment)),
 };

@@ -16,14 +16,12 @@ export type Refusal =
   | { refused: 'conflict'; byName: string; at: string; theirs: Record<string, string> }
   | { refused: 'gate'; gate: string; lacks: string[]; rule: string };
 
-export type Outcome<T = null> =
-  | ({ ok: true } & (T extends null ? { value?: null } : { value: T }))
-  | ({ ok: false } & Refusal);
+export type Outcome<T = null> = { ok: true; value: T } | ({ ok: false } & Refusal);
 
-export function done(): Outcome;
-export function done<T>(value: T): Outcome<T>;
-export function done<T>(value?: T): unknown {
-  return value === undefined ? { ok: true } : { ok: true, value };
+export function done(): { ok: true; value: null };
+export function done<T>(value: T): { ok: true; value: T };
+export function done(value: unknown = null): { ok: true; value: unknown } {
+  return { ok: true, value };
 }
 
 export function refuseFields(fields: FieldErrors): { ok: false } & Refusal {

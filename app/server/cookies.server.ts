@@ -1,14 +1,14 @@
-import { createCookie } from 'react-router';
+import { type CookieOptions, createCookie } from 'react-router';
 import type { Scheme } from '#app/domain/units/preferences.ts';
 import { env } from './env.server.ts';
 
-const shared = {
+const shared: CookieOptions = {
   path: '/',
   httpOnly: true,
   sameSite: 'lax',
   secure: env.PUBLIC_URL.startsWith('https://'),
   secrets: [env.SESSION_SECRET],
-} as const;
+};
 
 const YEAR_SECONDS = 365 * 24 * 60 * 60;
 export const SESSION_DAYS = 30;

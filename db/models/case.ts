@@ -27,7 +27,7 @@ export class Case extends Model<InferAttributes<Case>, InferCreationAttributes<C
   declare yardId: CreationOptional<number | null>;
   declare medium: CreationOptional<string>;
   declare title: CreationOptional<string>;
-  declare state: CreationOptional<CaseState>;
+  declare state: CaseState;
   declare chain: CreationOptional<ChainLink[]>;
   declare versions: CreationOptional<Partial<Record<LinkKey, number>>>;
   declare openedById: CreationOptional<number | null>;

@@ -51,7 +51,7 @@ export class Circuit extends Model<InferAttributes<Circuit>, InferCreationAttrib
   declare plateCharge: CreationOptional<string>;
   declare plateChargeUnit: CreationOptional<string>;
   declare oil: CreationOptional<string>;
-  declare metering: CreationOptional<'' | 'expansion-valve' | 'orifice'>;
+  declare metering: '' | 'expansion-valve' | 'orifice';
   declare portsText: CreationOptional<string>;
   declare version: CreationOptional<number>;
   declare createdAt: Date;

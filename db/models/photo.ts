@@ -9,7 +9,7 @@ export class Photo extends Model<InferAttributes<Photo>, InferCreationAttributes
   declare shopId: number;
   declare caseId: CreationOptional<number | null>;
   declare circuitId: CreationOptional<number | null>;
-  declare link: CreationOptional<LinkKey | ''>;
+  declare link: LinkKey | '';
   declare role: PhotoRole;
   declare caption: CreationOptional<string>;
   declare position: CreationOptional<number>;

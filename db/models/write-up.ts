@@ -23,7 +23,7 @@ export class WriteUp extends Model<InferAttributes<WriteUp>, InferCreationAttrib
   declare title: CreationOptional<string>;
   declare body: CreationOptional<string>;
   declare photoIds: CreationOptional<number[]>;
-  declare state: CreationOptional<WriteUpState>;
+  declare state: WriteUpState;
   declare authorId: CreationOptional<number | null>;
   declare authorName: CreationOptional<string>;
   declare version: CreationOptional<number>;

@@ -15,7 +15,10 @@ export const newCaseBody = z
     ambient: numberOrText,
     ambientUnit: z.string().optional(),
     hours: numberOrText,
-    severity: z.number().int().min(1).max(4).optional(),
+    severity: z
+      .unknown()
+      .optional()
+      .meta({ type: 'integer', description: 'From 1, a nuisance, to 4, the machine stands.' }),
   })
   .pipe(openCaseSchema);
 

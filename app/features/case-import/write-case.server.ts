@@ -64,7 +64,7 @@ export async function writeImportedCase(
     const row = before
       ? await before.update(values, { transaction })
       : await Case.create(
-          { ...where, ...values, number: await nextCaseNumber(actor.shopId, transaction) },
+          { ...where, ...values, state: 'open', number: await nextCaseNumber(actor.shopId, transaction) },
           { transaction },
         );
     await setSymptoms(row, line.symptoms, transaction);
@@ -114,7 +114,7 @@ async function circuitOf(
     return found;
   }
   return Circuit.create(
-    { ...where, refrigerant: line.refrigerant, createdAt: now, updatedAt: now },
+    { ...where, refrigerant: line.refrigerant, metering: '', createdAt: now, updatedAt: now },
     { transaction },
   );
 }
@@ -129,7 +129,11 @@ async function writeEvidence(
 ): Promise<void> {
   const of = { shopId: row.shopId, caseId: row.id, byName: line.technician };
   const earlier = { where: { caseId: row.id, byId: null }, transaction };
-  for (const model of [TraceMethod, Finding, RepairAction, Proof, Charge]) await model.destroy(earlier);
+  await TraceMethod.destroy(earlier);
+  await Finding.destroy(earlier);
+  await RepairAction.destroy(earlier);
+  await Proof.destroy(earlier);
+  await Charge.destroy(earlier);
   await TraceMethod.bulkCreate(
     line.methods.map((methodId) => ({ ...of, methodId, outcome: 'not-recorded' as const, at })),
     { transaction },

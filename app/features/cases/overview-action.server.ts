@@ -5,7 +5,7 @@ import type { Viewer } from '#app/server/context.ts';
 import { orRefuse } from '#app/server/guards.server.ts';
 import { redirectWithToast } from '#app/server/redirects.server.ts';
 import { fieldErrors, formObject, typedValues } from '../form-fields.ts';
-import { type Outcome, type Refusal, refuseFields } from '../outcome.ts';
+import { done, type Outcome, type Refusal, refuseFields } from '../outcome.ts';
 import {
   addComment,
   assignCase,
@@ -66,7 +66,7 @@ async function run(intent: string, viewer: Viewer, number: number, form: FormDat
       await judgeLikeness({ actor: viewer, number, otherNumber: Number(input.other) || 0, verdict }, now);
       const said =
         verdict === null ? 'Taken back.' : verdict === 'confirmed' ? 'Confirmed as alike.' : 'Dismissed.';
-      return { outcome: { ok: true }, said };
+      return { outcome: done(), said };
     }
     case 'park': {
       const parsed = parkSchema.safeParse(input);

@@ -94,6 +94,7 @@ async function createNote(
       shopId: row.shopId,
       caseId: row.id,
       slug: await freeSlug(row, title, transaction),
+      state: 'draft',
       authorId: actor.userId,
       authorName: actor.name,
       createdAt: now,

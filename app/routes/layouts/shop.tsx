@@ -1,6 +1,7 @@
-import { Outlet } from 'react-router';
+import { Outlet, useRouteLoaderData } from 'react-router';
 import { ErrorPage } from '#app/components/errors/error-page.tsx';
 import { AppShell } from '#app/components/shell/app-shell.tsx';
+import type { loader as rootLoader } from '#app/root.tsx';
 import { requireActor, requireViewer } from '#app/server/guards.server.ts';
 import type { Route } from './+types/shop.ts';
 
@@ -25,8 +26,8 @@ export default function ShopLayout({ loaderData, matches }: Route.ComponentProps
   );
 }
 
-export function ErrorBoundary({ error, loaderData, matches }: Route.ErrorBoundaryProps) {
-  const root = matches?.[0]?.loaderData;
+export function ErrorBoundary({ error, loaderData }: Route.ErrorBoundaryProps) {
+  const root = useRouteLoaderData<typeof rootLoader>('root');
   if (!loaderData) return <ErrorPage error={error} />;
   return (
     <AppShell viewer={loaderData.viewer} scheme={root?.scheme ?? 'system'} toast={null}>
