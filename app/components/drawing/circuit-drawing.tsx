@@ -43,7 +43,7 @@ export function CircuitDrawing({ names, found = [], counts = {}, selected, linkF
             strokeDasharray={branch ? '2 6' : undefined}
             strokeLinecap="round"
             strokeLinejoin="round"
-            className={side === 'low' ? 'stroke-line' : 'stroke-edge'}
+            className="stroke-edge"
           />
         ))}
         <rect

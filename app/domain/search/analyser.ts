@@ -84,6 +84,13 @@ export function fold(text: string): string {
     .normalize('NFKC');
 }
 
+/** The words of a query as typed, folded, each with the term that it is looked up by. */
+export function queryWords(text: string): { word: string; term: string }[] {
+  return splitWords(text)
+    .filter(({ folded }) => !STOP_WORDS.has(folded))
+    .map(({ folded, whole }) => ({ word: folded, term: whole }));
+}
+
 type Word = { whole: string; pieces: string[]; folded: string; start: number; end: number };
 
 function splitWords(text: string): Word[] {

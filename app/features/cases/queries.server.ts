@@ -98,12 +98,16 @@ function toRowView({ mediumId: _mediumId, ...row }: ListRow, medium: string): Ca
   };
 }
 
-/** What lies on the bench of a person: their unfinished cases and what each still lacks; for the lead the whole shop's. */
+/**
+ * What lies on the bench of a person: their unfinished cases and what each still lacks; for the lead the whole shop's.
+ * Records brought in from elsewhere that run again are history, not work.
+ */
 export async function loadBench(actor: Actor, now: Date) {
   const mine = actor.role === 'tech' ? 'AND c.assigneeId = :userId' : '';
   const rows = await sequelize.query<ListRow>(
     `SELECT ${LIST_COLUMNS} FROM ${LIST_TABLES}
-      WHERE c.shopId = :shopId AND c.state IN ${UNFINISHED} ${mine} ORDER BY c.openedAt DESC, c.id DESC LIMIT 60`,
+      WHERE c.shopId = :shopId AND c.state IN ${UNFINISHED} AND NOT (c.imported AND c.state = 'running') ${mine}
+      ORDER BY c.openedAt DESC, c.id DESC LIMIT 60`,
     { replacements: { shopId: actor.shopId, userId: actor.userId }, type: QueryTypes.SELECT },
   );
   const vocabulary = await shopVocabulary(actor.shopId);

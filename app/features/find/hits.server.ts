@@ -22,6 +22,8 @@ export type Hit = {
   machineModel: string;
   openedAt: string;
   causeLine: string;
+  /** Why it failed, where that is known. */
+  because: string;
   passage: MarkedPart[];
   why: string[];
   photo: { src: string; alt: string } | null;
@@ -99,6 +101,7 @@ function toHit(
     machineModel: row.machineModel,
     openedAt: row.openedAt.toISOString(),
     causeLine: causeLine(row, vocabulary),
+    because: row.causeId ? nameOf(vocabulary, 'cause', row.causeId) : '',
     passage: parts,
     why: whyFound(parts, contributions),
     photo:

@@ -1,5 +1,5 @@
 import { QueryTypes } from 'sequelize';
-import { analyseQuery, type Term } from '#app/domain/search/analyser.ts';
+import { analyseQuery, queryWords, type Term } from '#app/domain/search/analyser.ts';
 import { repairWord } from '#app/domain/search/spelling.ts';
 import { sequelize } from '#db/connection.server.ts';
 import { documentFrequencies } from './candidates.server.ts';
@@ -12,19 +12,18 @@ export type PreparedQuery = { terms: Term[]; repaired: { from: string; to: strin
 /** A query's terms; words that no text of the shop knows are repaired from the words that it does. */
 export async function prepareQuery(shopId: number, text: string, medium?: string): Promise<PreparedQuery> {
   const terms = analyseQuery(text, medium);
+  const words = queryWords(text);
   const known = await documentFrequencies(
     shopId,
-    terms.map(({ term }) => term),
-  );
-  const unknown = terms.filter(
-    ({ term, weight }) => weight === 1 && !term.startsWith('~') && !known.has(term),
+    words.map(({ term }) => term),
   );
   const repaired: PreparedQuery['repaired'] = [];
-  for (const { term } of unknown.slice(0, MOST_REPAIRS)) {
-    const to = repairWord(term, await wordsLike(shopId, term));
+  for (const { word, term } of words.filter((one) => !known.has(one.term)).slice(0, MOST_REPAIRS)) {
+    const like = await wordsLike(shopId, word);
+    const to = repairWord(word, like) ?? repairWord(term, like);
     if (!to || terms.some((other) => other.term === to)) continue;
     terms.push({ term: to, weight: REPAIRED_WEIGHT });
-    repaired.push({ from: term, to });
+    repaired.push({ from: word, to });
   }
   return { terms, repaired };
 }

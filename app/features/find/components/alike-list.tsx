@@ -20,7 +20,7 @@ export function AlikeList({ hits, caseNumber, mayJudge = false, newTab = false }
               >
                 {hit.number} {hit.title}
               </Link>
-              {hit.causeLine && <p className="break-words">{hit.causeLine}</p>}
+              {hit.because && <p className="break-words">{hit.because}</p>}
               <p className="text-sm text-muted break-words">
                 {hit.machineNumber} {hit.machineModel}
                 {hit.reasons.length > 0 && `: ${hit.reasons.join('; ')}`}

@@ -30,12 +30,12 @@ export function HitList({ hits }: { hits: readonly Hit[] }) {
               {hit.externalId && ` (${hit.externalId})`} · {hit.machineNumber} {hit.machineModel} ·{' '}
               {hit.mediumName} · <Day value={hit.openedAt} />
             </p>
-            {hit.causeLine && (
+            {hit.because && (
               <p className="mt-1 font-semibold break-words">
                 <span className="text-evidence" aria-hidden>
                   ●{' '}
                 </span>
-                {hit.causeLine}
+                {hit.because}
               </p>
             )}
             <p className="mt-1 max-w-prose break-words">
