@@ -30,6 +30,12 @@ export async function findCaseRow(actor: Actor, number: number, transaction?: Tr
   return row;
 }
 
+/** Turns away whoever may not do `needs` on this case, before anything they sent is looked at. */
+export async function requireOnCase(actor: Actor, number: number, needs: Action): Promise<void> {
+  await findCaseRow(actor, number);
+  if (!may(actor.role, needs)) throw new Forbidden();
+}
+
 /** The one way in which a case changes: authorised, locked, checked against what the person saw, written to the history, settled. */
 export async function changeCase<T>(options: Change<T>): Promise<Outcome<T>> {
   const { actor, number, needs, link, version, present, audit, change } = options;

@@ -3,6 +3,7 @@ import { may } from '#app/domain/permissions/matrix.ts';
 import { cautionsFor, usualProofs } from '#app/domain/vocabulary/vocabulary.ts';
 import { listCasePhotos } from '#app/features/photos/queries.server.ts';
 import { orRefuse, requireActor, wholeParam } from '#app/server/guards.server.ts';
+import { requireOnCase } from './change-case.server.ts';
 import { linkChoices } from './choices.ts';
 import { handleLinkAction } from './link-action.server.ts';
 import { loadLinks } from './link-views.server.ts';
@@ -32,10 +33,7 @@ export async function linkLoader({ context, params }: Args, link: NotedLink) {
 
 export async function linkAction({ request, context, params }: Args, link: NotedLink) {
   const viewer = requireActor(context);
-  return handleLinkAction({
-    viewer,
-    number: wholeParam(params.number),
-    link,
-    form: await request.formData(),
-  });
+  const number = wholeParam(params.number);
+  await orRefuse(requireOnCase(viewer, number, 'case:edit'));
+  return handleLinkAction({ viewer, number, link, form: await request.formData() });
 }

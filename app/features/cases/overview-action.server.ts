@@ -6,6 +6,7 @@ import { orRefuse } from '#app/server/guards.server.ts';
 import { redirectWithToast } from '#app/server/redirects.server.ts';
 import { fieldErrors, formObject, typedValues } from '../form-fields.ts';
 import { done, type Outcome, type Refusal, refuseFields } from '../outcome.ts';
+import { requireOnCase } from './change-case.server.ts';
 import {
   addComment,
   assignCase,
@@ -23,6 +24,7 @@ type Done = { outcome: Outcome<unknown>; said: string };
 /** The action of a case's first page: talk, likenesses, and where the case stands. */
 export async function overviewAction(viewer: Viewer, number: number, form: FormData) {
   const intent = String(form.get('intent') ?? '');
+  await orRefuse(requireOnCase(viewer, number, 'shop:read'));
   if (intent === 'share') {
     const link = await orRefuse(createSharedReport(viewer, number, form, new Date()));
     return data({

@@ -8,6 +8,7 @@ import type { Viewer } from '#app/server/context.ts';
 import { orRefuse } from '#app/server/guards.server.ts';
 import { redirectWithToast } from '#app/server/redirects.server.ts';
 import { saveCircuit } from './commands.server.ts';
+import { findMachine } from './queries.server.ts';
 import { circuitSchema } from './schema.ts';
 
 const REFRIGERANTS = [
@@ -46,6 +47,7 @@ export async function circuitAction(
   circuitId: number | null,
   form: FormData,
 ) {
+  await orRefuse(findMachine(viewer, machineId));
   const version = Number(form.get('version')) || undefined;
   const parsed = circuitSchema.safeParse(formObject(form));
   const outcome = parsed.success

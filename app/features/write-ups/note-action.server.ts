@@ -2,6 +2,7 @@ import { data } from 'react-router';
 import type { Viewer } from '#app/server/context.ts';
 import { orRefuse } from '#app/server/guards.server.ts';
 import { redirectWithToast } from '#app/server/redirects.server.ts';
+import { requireOnCase } from '../cases/change-case.server.ts';
 import { fieldErrors, formObject, typedValues } from '../form-fields.ts';
 import { type Outcome, type Refusal, refuseFields } from '../outcome.ts';
 import {
@@ -18,6 +19,7 @@ type Result = { outcome: Outcome<unknown>; said: string; to?: string };
 /** The action of the page on which a case's note is written, reviewed and published. */
 export async function noteAction(viewer: Viewer, number: number, form: FormData) {
   const intent = String(form.get('intent') ?? '');
+  await orRefuse(requireOnCase(viewer, number, 'write-up:write'));
   const {
     outcome,
     said,

@@ -4,6 +4,7 @@ import { MeasureField, SelectField, TextArea, TextField } from '#app/components/
 import { Button } from '#app/components/ui/button.tsx';
 import { Facts, Panel } from '#app/components/ui/panel.tsx';
 import { may } from '#app/domain/permissions/matrix.ts';
+import { requireOnCase } from '#app/features/cases/change-case.server.ts';
 import { symptomChips, unitChoices } from '#app/features/cases/choices.ts';
 import { saveComplaint } from '#app/features/cases/commands.server.ts';
 import { LinkFrame } from '#app/features/cases/components/link-frame.tsx';
@@ -36,6 +37,7 @@ export async function loader({ context, params }: Route.LoaderArgs) {
 export async function action({ request, context, params }: Route.ActionArgs) {
   const viewer = requireActor(context);
   const number = wholeParam(params.number);
+  await orRefuse(requireOnCase(viewer, number, 'case:edit'));
   const form = await request.formData();
   const parsed = complaintSchema.safeParse(formObject(form, ['symptoms']));
   const outcome = parsed.success

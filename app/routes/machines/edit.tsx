@@ -4,7 +4,7 @@ import { listYards } from '#app/features/cases/queries.server.ts';
 import { fieldErrors, formObject, typedValues } from '#app/features/form-fields.ts';
 import { changeMachine } from '#app/features/machines/commands.server.ts';
 import { MachineForm } from '#app/features/machines/components/machine-form.tsx';
-import { listMachineKinds, loadMachine } from '#app/features/machines/queries.server.ts';
+import { findMachine, listMachineKinds, loadMachine } from '#app/features/machines/queries.server.ts';
 import { machineSchema } from '#app/features/machines/schema.ts';
 import { refuseFields } from '#app/features/outcome.ts';
 import { orRefuse, requirePermission, wholeParam } from '#app/server/guards.server.ts';
@@ -29,6 +29,7 @@ export async function loader({ context, params }: Route.LoaderArgs) {
 export async function action({ request, context, params }: Route.ActionArgs) {
   const viewer = requirePermission(context, 'machine:edit');
   const machineId = wholeParam(params.id);
+  await orRefuse(findMachine(viewer, machineId));
   const form = await request.formData();
   const version = Number(form.get('version')) || undefined;
   const parsed = machineSchema.safeParse(formObject(form));

@@ -32,6 +32,7 @@ export async function loader({ context, params }: Route.LoaderArgs) {
 export async function action({ request, context, params }: Route.ActionArgs) {
   const viewer = requirePermission(context, 'people:manage');
   const userId = wholeParam(params.id);
+  await orRefuse(loadPerson(viewer, userId, new Date()));
   const form = await request.formData();
   const intent = String(form.get('intent') ?? '');
   const outcome = await orRefuse(run());
