@@ -81,5 +81,5 @@ export default function App() {
 }
 
 export function ErrorBoundary({ error }: Route.ErrorBoundaryProps) {
-  return <ErrorPage error={error} />;
+  return <ErrorPage error={error} standalone />;
 }

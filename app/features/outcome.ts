@@ -13,8 +13,15 @@ export type FieldErrors = Record<string, string>;
 
 export type Refusal =
   | { refused: 'fields'; fields: FieldErrors }
-  | { refused: 'conflict'; byName: string; at: string; theirs: Record<string, string> }
+  | { refused: 'conflict'; byName: string; at: string; theirs: Record<string, string>; version: number }
   | { refused: 'gate'; gate: string; lacks: string[]; rule: string };
+
+/** The version that a form is to carry when it is sent again: after a conflict the one that now stands. */
+export function versionToSend(refusal: Refusal | undefined, version: number): number;
+export function versionToSend(refusal: Refusal | undefined, version: number | undefined): number | undefined;
+export function versionToSend(refusal: Refusal | undefined, version: number | undefined): number | undefined {
+  return refusal?.refused === 'conflict' ? refusal.version : version;
+}
 
 export type Outcome<T = null> = { ok: true; value: T } | ({ ok: false } & Refusal);
 

@@ -19,12 +19,13 @@ const FAULT = {
   text: 'The fault is ours and has been noted. What was saved before is safe; go back and try the last step again.',
 };
 
-/** What happened, what was kept and what to do. */
-export function ErrorPage({ error }: { error: unknown }) {
+/** What happened, what was kept and what to do. `standalone` where no frame holds the page. */
+export function ErrorPage({ error, standalone = false }: { error: unknown; standalone?: boolean }) {
   const status = isRouteErrorResponse(error) ? error.status : 500;
   const { title, text } = WORDS[status] ?? FAULT;
+  const Frame = standalone ? 'main' : 'div';
   return (
-    <div className="mx-auto max-w-xl space-y-4 px-4 py-16 text-center">
+    <Frame className="mx-auto max-w-xl space-y-4 px-4 py-16 text-center">
       <p className="figures text-sm font-semibold text-muted">{status}</p>
       <h1 className="text-3xl font-semibold">{title}</h1>
       <p className="text-lg text-muted">{text}</p>
@@ -34,6 +35,6 @@ export function ErrorPage({ error }: { error: unknown }) {
         </ButtonLink>
         <ButtonLink to="/find">Find a case</ButtonLink>
       </p>
-    </div>
+    </Frame>
   );
 }

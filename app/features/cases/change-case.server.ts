@@ -71,5 +71,6 @@ async function conflict(row: Case, link: LinkKey, theirs: Record<string, string>
     byName: last?.byName ?? 'Somebody',
     at: (last?.at ?? row.updatedAt).toISOString(),
     theirs,
+    version: row.versions[link] ?? 1,
   };
 }

@@ -71,7 +71,7 @@ export async function changeMachine(
       return conflict(
         'machine',
         machineId,
-        machine.updatedAt,
+        machine,
         { number, kind, make, model, serial, year, hours, notes },
         transaction,
       );
@@ -100,7 +100,7 @@ export async function changeMachine(
 async function conflict(
   subject: string,
   subjectId: number,
-  changedAt: Date,
+  { updatedAt, version }: { updatedAt: Date; version: number },
   theirs: Record<string, string | number | null>,
   transaction: Transaction,
 ) {
@@ -113,7 +113,8 @@ async function conflict(
     ok: false as const,
     refused: 'conflict' as const,
     byName: last?.byName ?? 'Somebody',
-    at: changedAt.toISOString(),
+    at: updatedAt.toISOString(),
+    version,
     theirs: Object.fromEntries(
       Object.entries(theirs).map(([name, value]) => [name, value === null ? '' : String(value)]),
     ),
@@ -162,7 +163,7 @@ export async function saveCircuit(options: SaveCircuit, now: Date): Promise<Outc
       return conflict(
         'circuit',
         circuitId,
-        circuit.updatedAt,
+        circuit,
         { label, refrigerant, plateCharge, oil, metering, portsText },
         transaction,
       );

@@ -122,6 +122,7 @@ async function conflict(row: Case, note: WriteUp, transaction: Transaction) {
     byName: last?.byName ?? note.authorName,
     at: note.updatedAt.toISOString(),
     theirs: { title: note.title, body: note.body },
+    version: note.version,
   };
 }
 

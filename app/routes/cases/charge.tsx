@@ -18,7 +18,7 @@ export default function Charge({ loaderData, actionData }: Route.ComponentProps)
   const editing = editedEntry(useSearchParams()[0], 'charge');
   const shared = { choices, version: links.versions.charge ?? 1, actionData };
   return (
-    <LinkFrame link="charge" lacks={loaderData.lacks}>
+    <LinkFrame lacks={loaderData.lacks}>
       <Cautions cautions={cautions} />
       <Facts
         columns={3}

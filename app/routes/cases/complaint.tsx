@@ -13,7 +13,7 @@ import { loadLinks } from '#app/features/cases/link-views.server.ts';
 import { complaintSchema } from '#app/features/cases/schema.ts';
 import { fieldErrors, formObject, typedValues } from '#app/features/form-fields.ts';
 import { listCircuitChoices } from '#app/features/machines/queries.server.ts';
-import { refuseFields } from '#app/features/outcome.ts';
+import { refuseFields, versionToSend } from '#app/features/outcome.ts';
 import { orRefuse, requireActor, wholeParam } from '#app/server/guards.server.ts';
 import { redirectWithToast } from '#app/server/redirects.server.ts';
 import type { Route } from './+types/complaint.ts';
@@ -53,7 +53,7 @@ export default function Complaint({ loaderData, actionData }: Route.ComponentPro
   const pending = useNavigation().formMethod === 'POST';
   if (!mayEdit) {
     return (
-      <LinkFrame link="complaint" lacks={loaderData.lacks}>
+      <LinkFrame lacks={loaderData.lacks}>
         <Panel title="What the operator said">
           <p className="max-w-prose break-words whitespace-pre-line">{complaint.text}</p>
         </Panel>
@@ -74,9 +74,9 @@ export default function Complaint({ loaderData, actionData }: Route.ComponentPro
   const typed: Record<string, string> = actionData?.typed ?? {};
   const errors = refusal?.refused === 'fields' ? refusal.fields : {};
   return (
-    <LinkFrame link="complaint" lacks={loaderData.lacks}>
+    <LinkFrame lacks={loaderData.lacks}>
       <Form method="post" key={version} className="max-w-3xl space-y-6" noValidate>
-        <input type="hidden" name="version" value={version} />
+        <input type="hidden" name="version" value={versionToSend(refusal, version)} />
         <RefusalNotice refusal={refusal} />
         <TextArea
           name="complaint"

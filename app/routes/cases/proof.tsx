@@ -17,7 +17,7 @@ export default function Proof({ loaderData, actionData }: Route.ComponentProps) 
   const editing = editedEntry(useSearchParams()[0], 'proof');
   const shared = { choices, version: links.versions.proof ?? 1, actionData };
   return (
-    <LinkFrame link="proof" lacks={loaderData.lacks}>
+    <LinkFrame lacks={loaderData.lacks}>
       <Cautions cautions={cautions} />
       {loaderData.usualProofs.length > 0 && (
         <details>

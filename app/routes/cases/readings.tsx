@@ -16,7 +16,7 @@ export default function Readings({ loaderData, actionData }: Route.ComponentProp
   const editing = editedEntry(useSearchParams()[0], 'reading');
   const shared = { choices, version: links.versions.readings ?? 1, actionData };
   return (
-    <LinkFrame link="readings" lacks={loaderData.lacks}>
+    <LinkFrame lacks={loaderData.lacks}>
       <Panel
         title="Readings"
         lead="Pressures standing and running, temperatures, in the unit that the gauge shows."

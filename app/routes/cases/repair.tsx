@@ -17,7 +17,7 @@ export default function Repair({ loaderData, actionData }: Route.ComponentProps)
   const editing = editedEntry(useSearchParams()[0], 'repair');
   const shared = { choices, version: links.versions.repair ?? 1, actionData };
   return (
-    <LinkFrame link="repair" lacks={loaderData.lacks}>
+    <LinkFrame lacks={loaderData.lacks}>
       <Cautions cautions={cautions} />
       <Panel
         title="Repair"

@@ -24,7 +24,7 @@ export default function Trace({ loaderData, actionData }: Route.ComponentProps) 
     .filter(({ certainty }) => certainty !== 'ruled-out')
     .map(({ componentId }) => componentId);
   return (
-    <LinkFrame link="trace" lacks={loaderData.lacks}>
+    <LinkFrame lacks={loaderData.lacks}>
       <Cautions cautions={cautions} />
       <Panel title="Methods" lead="What was tried and what each showed, also what showed nothing.">
         <EntryList

@@ -18,5 +18,5 @@ export default function OpenLayout({ loaderData, matches }: Route.ComponentProps
 }
 
 export function ErrorBoundary({ error }: Route.ErrorBoundaryProps) {
-  return <ErrorPage error={error} />;
+  return <ErrorPage error={error} standalone />;
 }

@@ -28,7 +28,7 @@ export default function ShopLayout({ loaderData, matches }: Route.ComponentProps
 
 export function ErrorBoundary({ error, loaderData }: Route.ErrorBoundaryProps) {
   const root = useRouteLoaderData<typeof rootLoader>('root');
-  if (!loaderData) return <ErrorPage error={error} />;
+  if (!loaderData) return <ErrorPage error={error} standalone />;
   return (
     <AppShell viewer={loaderData.viewer} scheme={root?.scheme ?? 'system'} toast={null}>
       <ErrorPage error={error} />

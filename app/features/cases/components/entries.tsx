@@ -2,6 +2,7 @@ import { Pencil } from 'lucide-react';
 import { Form, Link, useNavigation } from 'react-router';
 import { Button, ButtonLink } from '#app/components/ui/button.tsx';
 import { DateTime } from '#app/components/ui/time.tsx';
+import { versionToSend } from '#app/features/outcome.ts';
 import type { LinkChoices } from '../choices.ts';
 import type { LinkActionData } from '../link-action.server.ts';
 import type { EntryView } from '../link-views.server.ts';
@@ -79,7 +80,7 @@ function ChangeEntry({ entry, kind, choices, version, actionData }: Shared & { e
     <Form method="post" className="space-y-5 rounded-xl bg-raised p-4" noValidate>
       <input type="hidden" name="kind" value={kind} />
       <input type="hidden" name="entryId" value={entry.id} />
-      <input type="hidden" name="version" value={version} />
+      <input type="hidden" name="version" value={versionToSend(mine?.refusal, version)} />
       <RefusalNotice refusal={mine?.refusal} />
       <EntryFields kind={kind} choices={choices} values={mine?.typed ?? entry.values} errors={errors} />
       <div className="flex flex-wrap gap-2">

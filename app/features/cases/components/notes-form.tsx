@@ -1,6 +1,7 @@
 import { Form, useNavigation } from 'react-router';
 import { TextArea } from '#app/components/forms/field.tsx';
 import { Button } from '#app/components/ui/button.tsx';
+import { versionToSend } from '#app/features/outcome.ts';
 import type { LinkActionData } from '../link-action.server.ts';
 import { RefusalNotice } from './refusal-notice.tsx';
 
@@ -24,7 +25,7 @@ export function NotesForm({ label, note, version, mayEdit, actionData }: Props) 
     );
   return (
     <Form method="post" className="space-y-3" noValidate>
-      <input type="hidden" name="version" value={version} />
+      <input type="hidden" name="version" value={versionToSend(mine?.refusal, version)} />
       <RefusalNotice refusal={mine?.refusal} />
       <TextArea
         key={mine ? 'typed' : note}

@@ -8,7 +8,7 @@ import {
 } from '#app/components/forms/field.tsx';
 import { Button } from '#app/components/ui/button.tsx';
 import { RefusalNotice } from '#app/features/cases/components/refusal-notice.tsx';
-import type { Refusal } from '#app/features/outcome.ts';
+import { type Refusal, versionToSend } from '#app/features/outcome.ts';
 
 type Props = {
   values: Record<string, string>;
@@ -26,7 +26,9 @@ export function CircuitForm({ values, version, refusal, groups, units, refrigera
   const field = (name: string) => ({ name, defaultValue: values[name] ?? '', error: errors[name] });
   return (
     <Form method="post" className="max-w-3xl space-y-5" noValidate>
-      {version !== undefined && <input type="hidden" name="version" value={version} />}
+      {version !== undefined && (
+        <input type="hidden" name="version" value={versionToSend(refusal, version)} />
+      )}
       <RefusalNotice refusal={refusal} />
       <div className="grid gap-5 sm:grid-cols-2">
         <SelectField {...field('circuit')} label="Circuit" blank="Choose" groups={groups} />

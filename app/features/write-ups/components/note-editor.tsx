@@ -4,7 +4,7 @@ import { TextArea, TextField } from '#app/components/forms/field.tsx';
 import { PhotoPicker } from '#app/components/photos/photo-picker.tsx';
 import { Button } from '#app/components/ui/button.tsx';
 import { RefusalNotice } from '#app/features/cases/components/refusal-notice.tsx';
-import type { Refusal } from '#app/features/outcome.ts';
+import { type Refusal, versionToSend } from '#app/features/outcome.ts';
 import type { PhotoView } from '#app/features/photos/views.ts';
 
 type Props = {
@@ -41,7 +41,9 @@ export function NoteEditor(props: Props) {
   const gated = refusal?.refused === 'gate';
   return (
     <Form method="post" className="space-y-5" noValidate>
-      {version !== undefined && <input type="hidden" name="version" value={version} />}
+      {version !== undefined && (
+        <input type="hidden" name="version" value={versionToSend(refusal, version)} />
+      )}
       <RefusalNotice refusal={refusal} />
       {gated && mayOverride && (
         <div className="space-y-3 rounded-xl border border-danger p-4">
