@@ -18,22 +18,33 @@ describe('the import', () => {
   test('makes machines, circuits and cases, and keeps the technician as a name', async () => {
     const result = await importCases(shop.lead, LINES.join('\n'), new Date());
     expect(result).toEqual({ created: 12, updated: 0, failed: [] });
-    const row = await Case.findOne({ where: { shopId: shop.shop.id, externalId: 'BW-1001' }, rejectOnEmpty: true });
+    const row = await Case.findOne({
+      where: { shopId: shop.shop.id, externalId: 'BW-1001' },
+      rejectOnEmpty: true,
+    });
     expect(row).toMatchObject({ technicianName: 'Rhedyn', openedById: null, imported: true });
     expect(await Machine.count({ where: { shopId: shop.shop.id, number: 'T05' } })).toBe(1);
     const { view } = await loadLinks(shop.tech, row.number);
     expect(view.findings).toMatchObject([{ componentId: 'service-valve-lp', certainty: 'confirmed' }]);
     expect(view.charges).toMatchObject([{ headline: 'Put in: 850 g R-134a' }]);
-    expect(await WriteUp.findOne({ where: { caseId: row.id } })).toMatchObject({ state: 'published', title: 'Tyre cores are for tyres' });
+    expect(await WriteUp.findOne({ where: { caseId: row.id } })).toMatchObject({
+      state: 'published',
+      title: 'Tyre cores are for tyres',
+    });
   });
 
   test('the same id again updates and doubles nothing', async () => {
     const changed = JSON.stringify({ ...JSON.parse(LINES[0] ?? '{}'), complaint: 'Changed words.' });
     expect(await importCases(shop.lead, changed, new Date())).toEqual({ created: 0, updated: 1, failed: [] });
-    const row = await Case.findOne({ where: { shopId: shop.shop.id, externalId: 'BW-1001' }, rejectOnEmpty: true });
+    const row = await Case.findOne({
+      where: { shopId: shop.shop.id, externalId: 'BW-1001' },
+      rejectOnEmpty: true,
+    });
     expect(row.complaint).toBe('Changed words.');
     const { view } = await loadLinks(shop.tech, row.number);
-    expect([view.findings.length, view.methods.length, view.proofs.length, view.charges.length]).toEqual([1, 1, 1, 1]);
+    expect([view.findings.length, view.methods.length, view.proofs.length, view.charges.length]).toEqual([
+      1, 1, 1, 1,
+    ]);
   });
 
   test('good lines are kept when others fail, each failure with its line and field', async () => {
@@ -103,7 +114,11 @@ describe('alike', () => {
   });
 
   test('a confirmed one comes first, a dismissed one last, for both cases', async () => {
-    const [one, other, wrong] = [await numberOf('BW-1091'), await numberOf('BW-1261'), await numberOf('BW-1002')];
+    const [one, other, wrong] = [
+      await numberOf('BW-1091'),
+      await numberOf('BW-1261'),
+      await numberOf('BW-1002'),
+    ];
     const judge = (otherNumber: number, verdict: 'confirmed' | 'dismissed' | null) =>
       judgeLikeness({ actor: shop.tech, number: one, otherNumber, verdict }, new Date());
     await judge(other, 'confirmed');
@@ -113,11 +128,17 @@ describe('alike', () => {
     expect(hits.at(-1)).toMatchObject({ number: wrong, verdict: 'dismissed' });
     expect((await alikeCases(shop.tech, other, 1))[0]?.number).toBe(one);
     await judge(other, null);
-    expect((await alikeCases(shop.tech, one, 100)).find(({ number }) => number === other)?.verdict).toBeNull();
+    expect(
+      (await alikeCases(shop.tech, one, 100)).find(({ number }) => number === other)?.verdict,
+    ).toBeNull();
   });
 
   test('a complaint that is being typed finds solved cases of its medium', async () => {
-    const hits = await alikeComplaint(shop.tech, { text: 'boom creeps down, ram wet', symptomIds: ['load-drifts'], medium: 'hydraulic-oil' }, 5);
+    const hits = await alikeComplaint(
+      shop.tech,
+      { text: 'boom creeps down, ram wet', symptomIds: ['load-drifts'], medium: 'hydraulic-oil' },
+      5,
+    );
     expect(hits.length).toBeGreaterThan(0);
     expect(new Set(hits.map(({ mediumName }) => mediumName))).toEqual(new Set(['Hydraulic oil']));
     expect(hits.every(({ causeLine }) => causeLine !== '')).toBe(true);
@@ -125,7 +146,11 @@ describe('alike', () => {
 
   test('another shop’s case cannot be judged', async () => {
     const far = await makeShop();
-    const judgement = { actor: far.lead, number: await numberOf('BW-1091'), otherNumber: await numberOf('BW-1002') };
+    const judgement = {
+      actor: far.lead,
+      number: await numberOf('BW-1091'),
+      otherNumber: await numberOf('BW-1002'),
+    };
     await expect(judgeLikeness({ ...judgement, verdict: 'confirmed' }, new Date())).rejects.toThrow();
   });
 });

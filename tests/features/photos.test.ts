@@ -1,8 +1,9 @@
-import { readFileSync, readdirSync } from 'node:fs';
+import { readdirSync, readFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import exifr from 'exifr';
 import { Jimp } from 'jimp';
 import { afterEach, beforeAll, describe, expect, test } from 'vitest';
+import type { Actor } from '#app/domain/permissions/actor.ts';
 import { loadCaseHead } from '#app/features/cases/queries.server.ts';
 import { Forbidden, NotFound } from '#app/features/outcome.ts';
 import { findPhotoFor, findSignedPhoto, signedPhotoPath } from '#app/features/photos/access.server.ts';
@@ -11,7 +12,6 @@ import { listCasePhotos, listCircuitPhotos } from '#app/features/photos/queries.
 import { MOST_BYTES, receiveForm } from '#app/features/photos/receive.server.ts';
 import { photoAnswer } from '#app/features/photos/serve.server.ts';
 import { keepUploads } from '#app/features/photos/upload.server.ts';
-import type { Actor } from '#app/domain/permissions/actor.ts';
 import { Photo } from '#db/models/index.ts';
 import { checkStorage } from '#storage/check.ts';
 import { objectKeyOf, PHOTO_PREFIX } from '#storage/keys.ts';
@@ -42,7 +42,8 @@ type Sent = Record<string, string | File | File[]>;
 
 function upload(actor: Actor, fields: Sent) {
   const form = new FormData();
-  for (const [name, value] of Object.entries(fields)) for (const one of [value].flat()) form.append(name, one);
+  for (const [name, value] of Object.entries(fields))
+    for (const one of [value].flat()) form.append(name, one);
   const request = new Request('http://127.0.0.1/x', { method: 'POST', body: form });
   return receiveForm(request, (received) => keepUploads(actor, received, new Date()));
 }
@@ -67,34 +68,44 @@ describe('what is kept', () => {
   test('three objects, upright, without metadata; the original byte for byte', async () => {
     const turned = readdirSync('db/seeds/demo/photos').map((name) => `db/seeds/demo/photos/${name}`);
     const orientations = await Promise.all(turned.map((name) => exifr.orientation(name)));
-    const source = turned[orientations.findIndex((orientation) => orientation === 6)] ?? '';
+    const source = turned[orientations.indexOf(6)] ?? '';
     expect(source).not.toBe('');
     const bytes = readFileSync(source);
     expect(await exifr.gps(bytes)).toBeTruthy();
     const { photos, errors } = await onCase(file(bytes));
     expect(errors).toEqual([]);
     expect(photos).toMatchObject([{ width: 1600, height: 1200, capturedAtSource: 'file' }]);
-    const row = await Photo.findByPk(photos[0]?.id, { rejectOnEmpty: true });
+    const row = await Photo.findByPk(photos[0]?.id ?? 0, { rejectOnEmpty: true });
     expect((await bytesOf(objectKeyOf(row.objectKey, 'original'))).equals(bytes)).toBe(true);
-    for (const [size, width, height] of [['medium', 1600, 1200], ['thumb', 320, 240]] as const) {
+    for (const [size, width, height] of [
+      ['medium', 1600, 1200],
+      ['thumb', 320, 240],
+    ] as const) {
       const copy = await bytesOf(objectKeyOf(row.objectKey, size));
       const image = await Jimp.fromBuffer(copy);
       expect([image.bitmap.width, image.bitmap.height]).toEqual([width, height]);
-      expect(await exifr.parse(copy, { gps: true, tiff: true, exif: true }).catch(() => undefined)).toBeFalsy();
+      expect(
+        await exifr.parse(copy, { gps: true, tiff: true, exif: true }).catch(() => undefined),
+      ).toBeFalsy();
     }
   });
 
   test('PNG and WebP too; a time that is not known is said to be unknown', async () => {
     const png = await new Jimp({ width: 40, height: 30, color: 0x00ff00ff }).getBuffer('image/png');
     const webp = readFileSync('tests/reference/photos/small.webp');
-    const { photos, errors } = await onCase([file(png, 'a.png'), file(webp, 'b.webp')]);
+    const { photos, errors } = await onCase([
+      file(new Uint8Array(png), 'a.png'),
+      file(new Uint8Array(webp), 'b.webp'),
+    ]);
     expect(errors).toEqual([]);
     expect(photos).toMatchObject([
       { width: 40, height: 30, capturedAtSource: 'unknown', capturedAt: null },
       { capturedAtSource: 'unknown' },
     ]);
-    const named = await onCase(file(png), { capturedAt: '2026-05-03T10:11:12.000Z' });
-    expect(named.photos).toMatchObject([{ capturedAtSource: 'browser', capturedAt: '2026-05-03T10:11:12.000Z' }]);
+    const named = await onCase(file(new Uint8Array(png)), { capturedAt: '2026-05-03T10:11:12.000Z' });
+    expect(named.photos).toMatchObject([
+      { capturedAtSource: 'browser', capturedAt: '2026-05-03T10:11:12.000Z' },
+    ]);
   });
 
   test('the chain knows of it', async () => {
@@ -104,7 +115,11 @@ describe('what is kept', () => {
   });
 
   test('on a circuit, for the ports', async () => {
-    const { photos } = await upload(shop.office, { circuitId: String(circuitId), role: 'port', photos: file(GAUGE) });
+    const { photos } = await upload(shop.office, {
+      circuitId: String(circuitId),
+      role: 'port',
+      photos: file(GAUGE),
+    });
     expect(photos).toMatchObject([{ role: 'port' }]);
     expect((await listCircuitPhotos(shop.tech, circuitId)).photos.length).toBe(1);
   });
@@ -134,7 +149,11 @@ describe('what is refused, with a clear error and nothing left behind', () => {
     ['an SVG', '<svg xmlns="http://www.w3.org/2000/svg"/>', /not a JPEG, PNG or WebP/],
     ['a zip named .jpg', Buffer.from('504b0304140000000000', 'hex'), /not a JPEG, PNG or WebP/],
     ['a JPEG cut in half', GAUGE.subarray(0, Math.floor(GAUGE.length / 3)), /damaged/],
-    ['a JPEG of noise', Buffer.concat([Buffer.from('ffd8ffe000104a464946', 'hex'), Buffer.alloc(400, 7)]), /damaged/],
+    [
+      'a JPEG of noise',
+      Buffer.concat([Buffer.from('ffd8ffe000104a464946', 'hex'), Buffer.alloc(400, 7)]),
+      /damaged/,
+    ],
     ['a header of 50,000 × 50,000', png(50_000, 50_000), /megapixels/],
     ['a header without a picture', png(100, 100), /damaged/],
     ['more than 25 MB', Buffer.alloc(MOST_BYTES + 1, 1), /larger than 25 MB/],
@@ -158,7 +177,9 @@ describe('what is refused, with a clear error and nothing left behind', () => {
     const many = Array.from({ length: 21 }, (_, place) => file('x', `${place}.jpg`));
     const { errors } = await onCase(many);
     expect(errors[0]?.error).toContain('At most 20');
-    expect((await upload(shop.tech, { caseNumber: String(number) })).errors[0]?.error).toContain('at least one');
+    expect((await upload(shop.tech, { caseNumber: String(number) })).errors[0]?.error).toContain(
+      'at least one',
+    );
   });
 
   test('when the row fails, the objects go', async () => {
@@ -179,7 +200,8 @@ describe('who may do what', () => {
   });
 
   test('the original: its uploader, the lead and the admin', async () => {
-    for (const actor of [shop.tech, shop.lead, shop.admin]) expect(await findPhotoFor(actor, photoId, 'original')).toBeTruthy();
+    for (const actor of [shop.tech, shop.lead, shop.admin])
+      expect(await findPhotoFor(actor, photoId, 'original')).toBeTruthy();
     await expect(findPhotoFor(shop.office, photoId, 'original')).rejects.toThrow(Forbidden);
     expect(await findPhotoFor(shop.office, photoId, 'medium')).toBeTruthy();
   });
@@ -189,15 +211,22 @@ describe('who may do what', () => {
       await expect(findPhotoFor(far.lead, photoId, size)).rejects.toThrow(NotFound);
     }
     await expect(changePhoto(far.lead, photoId, { intent: 'delete' }, new Date())).rejects.toThrow(NotFound);
-    await expect(upload(far.tech, { caseNumber: String(number), photos: file(GAUGE) })).rejects.toThrow(NotFound);
-    await expect(upload(far.tech, { circuitId: String(circuitId), photos: file(GAUGE) })).rejects.toThrow(NotFound);
-    await expect(upload(shop.admin, { caseNumber: String(number), photos: file(GAUGE) })).rejects.toThrow(Forbidden);
+    await expect(upload(far.tech, { caseNumber: String(number), photos: file(GAUGE) })).rejects.toThrow(
+      NotFound,
+    );
+    await expect(upload(far.tech, { circuitId: String(circuitId), photos: file(GAUGE) })).rejects.toThrow(
+      NotFound,
+    );
+    await expect(upload(shop.admin, { caseNumber: String(number), photos: file(GAUGE) })).rejects.toThrow(
+      Forbidden,
+    );
   });
 
   test('a signed link works for its size and time only', async () => {
     const now = new Date();
     const until = new Date(now.getTime() + 60_000);
-    const params = (size: 'thumb' | 'medium') => new URL(signedPhotoPath(photoId, size, until), 'http://x').searchParams;
+    const params = (size: 'thumb' | 'medium') =>
+      new URL(signedPhotoPath(photoId, size, until), 'http://x').searchParams;
     expect(await findSignedPhoto(photoId, 'medium', params('medium'), now)).toBeTruthy();
     await expect(findSignedPhoto(photoId, 'thumb', params('medium'), now)).rejects.toThrow(NotFound);
     await expect(findSignedPhoto(photoId, 'original', params('medium'), now)).rejects.toThrow(NotFound);
@@ -215,14 +244,21 @@ describe('who may do what', () => {
     const tag = whole?.headers.get('ETag') ?? '';
     expect((await ask({ 'If-None-Match': tag }))?.status).toBe(304);
     const part = await ask({ Range: 'bytes=10-19' });
-    expect([part?.status, part?.headers.get('Content-Range')]).toEqual([206, `bytes 10-19/${GAUGE.byteLength}`]);
-    expect(Buffer.from((await part?.arrayBuffer()) ?? new ArrayBuffer(0)).equals(GAUGE.subarray(10, 20))).toBe(true);
+    expect([part?.status, part?.headers.get('Content-Range')]).toEqual([
+      206,
+      `bytes 10-19/${GAUGE.byteLength}`,
+    ]);
+    expect(
+      Buffer.from((await part?.arrayBuffer()) ?? new ArrayBuffer(0)).equals(GAUGE.subarray(10, 20)),
+    ).toBe(true);
     expect((await ask({ Range: 'bytes=999999999-' }))?.status).toBe(416);
     await (await ask({ Range: 'nonsense' }))?.body?.cancel();
   });
 
   test('deleted by its uploader or the lead, and brought back', async () => {
-    await expect(changePhoto(shop.office, photoId, { intent: 'delete' }, new Date())).rejects.toThrow(Forbidden);
+    await expect(changePhoto(shop.office, photoId, { intent: 'delete' }, new Date())).rejects.toThrow(
+      Forbidden,
+    );
     await changePhoto(shop.tech, photoId, { intent: 'delete' }, new Date());
     const shown = await listCasePhotos(shop.tech, number);
     expect(shown.photos.some(({ id }) => id === photoId)).toBe(false);
@@ -248,11 +284,14 @@ describe('the storage check', () => {
     await checkStorage(true, LATER);
     expect((await checkStorage(false, LATER)).faults).toEqual([]);
     const rows = await Photo.findAll({ limit: 3, order: [['id', 'ASC']] });
-    const key = (place: number, size: 'thumb' | 'original') => objectKeyOf(rows[place]?.objectKey ?? '', size);
+    const key = (place: number, size: 'thumb' | 'original') =>
+      objectKeyOf(rows[place]?.objectKey ?? '', size);
     await deleteObjects([key(0, 'thumb'), key(1, 'original')]);
     await putObject(`${PHOTO_PREFIX}${shop.shop.id}/photo/orphan/medium`, Buffer.from('x'), 'image/jpeg', 1);
     await rows[2]?.update({ deletedAt: new Date('2020-01-01') });
-    expect((await checkStorage(false, new Date())).faults.some((fault) => fault.includes('orphan'))).toBe(false);
+    expect((await checkStorage(false, new Date())).faults.some((fault) => fault.includes('orphan'))).toBe(
+      false,
+    );
     const { faults } = await checkStorage(true, LATER);
     expect(faults.map((fault) => fault.replace(/\d+/g, 'N')).sort()).toEqual([
       'object without a photo: shop/N/photo/orphan/medium',

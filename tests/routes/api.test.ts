@@ -1,6 +1,6 @@
 import { readFileSync } from 'node:fs';
 import { beforeAll, describe, expect, test } from 'vitest';
-import { issueApiToken, revokeApiToken, listOwnTokens } from '#app/features/api-tokens/tokens.server.ts';
+import { issueApiToken, listOwnTokens, revokeApiToken } from '#app/features/api-tokens/tokens.server.ts';
 import { type MadeShop, makeMachine, makeShop } from '#tests/setup/people.ts';
 import { visit } from '#tests/setup/site.ts';
 
@@ -9,13 +9,20 @@ let token = '';
 const LINES = readFileSync('db/seeds/demo/cases.jsonl', 'utf8').trim().split('\n').slice(0, 30).join('\n');
 
 const call = (address: string, options: Parameters<typeof visit>[1] = {}, bearer = token) =>
-  visit(`/api/v1${address}`, { ...options, headers: { Authorization: `Bearer ${bearer}`, ...options.headers } });
+  visit(`/api/v1${address}`, {
+    ...options,
+    headers: { Authorization: `Bearer ${bearer}`, ...options.headers },
+  });
 
 beforeAll(async () => {
   shop = await makeShop();
   await makeMachine(shop.shop.id, 'W91');
   token = await issueApiToken(shop.lead, 'tests', new Date());
-  const answer = await call('/cases/import', { method: 'POST', body: LINES, headers: { 'Content-Type': 'application/x-ndjson' } });
+  const answer = await call('/cases/import', {
+    method: 'POST',
+    body: LINES,
+    headers: { 'Content-Type': 'application/x-ndjson' },
+  });
   expect(await answer.json()).toEqual({ created: 30, updated: 0, failed: [] });
 });
 
@@ -37,22 +44,41 @@ describe('the API', () => {
       });
     }
     expect(results[0].highlights[0]).toContain('<mark>');
-    expect(facets.medium).toEqual([{ value: 'refrigerant', label: 'Refrigerant', count: expect.any(Number) }]);
+    expect(facets.medium).toEqual([
+      { value: 'refrigerant', label: 'Refrigerant', count: expect.any(Number) },
+    ]);
   });
 
-  test.each(['limit=0', 'limit=101', 'limit=x', 'limit=1.5'])('%s is a 400 that names the field', async (query) => {
-    const answer = await call(`/find?q=x&${query}`);
-    expect(answer.status).toBe(400);
-    expect(await answer.json()).toMatchObject({ error: { code: 'invalid', fields: { limit: expect.any(String) } } });
-  });
+  test.each(['limit=0', 'limit=101', 'limit=x', 'limit=1.5'])(
+    '%s is a 400 that names the field',
+    async (query) => {
+      const answer = await call(`/find?q=x&${query}`);
+      expect(answer.status).toBe(400);
+      expect(await answer.json()).toMatchObject({
+        error: { code: 'invalid', fields: { limit: expect.any(String) } },
+      });
+    },
+  );
 
   test('opens a case and answers it, its likenesses and its photos', async () => {
-    const opened = await call('/cases', { json: { machine: 'W91', complaint: 'Hose rubbed through by the step', hours: 812, ambient: 14, ambientUnit: 'C' } });
+    const opened = await call('/cases', {
+      json: {
+        machine: 'W91',
+        complaint: 'Hose rubbed through by the step',
+        hours: 812,
+        ambient: 14,
+        ambientUnit: 'C',
+      },
+    });
     expect(opened.status).toBe(201);
     const { number, state, chain } = await opened.json();
     expect({ state, links: chain.length }).toEqual({ state: 'open', links: 7 });
     const read = await (await call(`/cases/${number}`)).json();
-    expect(read.complaint).toMatchObject({ text: 'Hose rubbed through by the step', hours: 812, ambient: '14' });
+    expect(read.complaint).toMatchObject({
+      text: 'Hose rubbed through by the step',
+      hours: 812,
+      ambient: '14',
+    });
     const alike = await (await call(`/cases/${number}/alike?limit=2`)).json();
     expect(alike.results.length).toBe(2);
     expect(alike.results[0].why.length).toBeGreaterThan(0);
@@ -64,7 +90,10 @@ describe('the API', () => {
     const { number } = await opened.json();
     const form = new FormData();
     form.append('role', 'uv');
-    form.append('photos', new File([readFileSync('db/seeds/demo/photos/gauge-static-equal.jpg')], 'gauge.jpg'));
+    form.append(
+      'photos',
+      new File([readFileSync('db/seeds/demo/photos/gauge-static-equal.jpg')], 'gauge.jpg'),
+    );
     form.append('photos', new File(['hello'], 'words.jpg'));
     const answer = await call(`/cases/${number}/photos`, { form });
     expect(answer.status).toBe(201);
@@ -94,7 +123,9 @@ describe('the API', () => {
   });
 
   test('bytes that are no text, and too many of them', async () => {
-    expect((await call('/cases', { method: 'POST', body: new Uint8Array([0xff, 0xfe, 0xc3]) })).status).toBe(400);
+    expect((await call('/cases', { method: 'POST', body: new Uint8Array([0xff, 0xfe, 0xc3]) })).status).toBe(
+      400,
+    );
     expect((await call('/cases', { method: 'POST', body: 'x'.repeat(1_100_000) })).status).toBe(413);
   });
 
@@ -120,11 +151,14 @@ describe('the API', () => {
     expect(await answer.json()).toMatchObject({ error: { code: 'method_not_allowed' } });
   });
 
-  test.each(['/cases/999999', '/cases/abc', '/cases/1e3', '/machines/0', '/nothing/here'])('%s is a 404', async (address) => {
-    const answer = await call(address);
-    expect(answer.status).toBe(404);
-    expect(await answer.json()).toMatchObject({ error: { code: 'not_found', fields: {} } });
-  });
+  test.each(['/cases/999999', '/cases/abc', '/cases/1e3', '/machines/0', '/nothing/here'])(
+    '%s is a 404',
+    async (address) => {
+      const answer = await call(address);
+      expect(answer.status).toBe(404);
+      expect(await answer.json()).toMatchObject({ error: { code: 'not_found', fields: {} } });
+    },
+  );
 
   test('a token that is wrong, of another kind or revoked is a 401', async () => {
     for (const bearer of ['', 'x', 'wm_aaaaaaaaaaaaaaaaaaaaaaaaaaaaaaaaaaaaaaaaaaa']) {
