@@ -1,5 +1,6 @@
 import { useEffect, useRef } from 'react';
 import { useFetcher } from 'react-router';
+import { Skeleton } from '#app/components/ui/skeleton.tsx';
 import type { AlikeHit } from '#app/features/find/alike.server.ts';
 import { AlikeList } from '#app/features/find/components/alike-list.tsx';
 
@@ -29,7 +30,9 @@ export function AlikeWhileTyping({ text, symptoms, medium, machine }: Props) {
       className="rounded-xl border border-line bg-surface p-4"
     >
       <h2 className="font-semibold">Solved before</h2>
-      {data === undefined ? (
+      {data === undefined && state !== 'idle' ? (
+        <Skeleton label="Looking for solved cases" />
+      ) : data === undefined ? (
         <p className="text-muted">While you write, solved cases like this one appear here.</p>
       ) : data.hits.length === 0 ? (
         <p className="text-muted">Nothing like it yet.</p>
