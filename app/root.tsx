@@ -9,6 +9,7 @@ import { readScheme, takeToast } from '#app/server/cookies.server.ts';
 import { logger } from '#app/server/logger.server.ts';
 import { useNonce } from '#app/server/nonce.ts';
 import { isCrossSiteWrite, setSecurityHeaders } from '#app/server/security.server.ts';
+import { whileUnderWay } from '#app/server/shutdown.server.ts';
 import type { Route } from './+types/root.ts';
 import favicon from './components/shell/favicon.svg';
 import './app.css';
@@ -29,7 +30,7 @@ async function logRequest(
   const requestId = randomUUID();
   context.set(requestIdContext, requestId);
   const started = performance.now();
-  const response = (await next()) as Response;
+  const response = await whileUnderWay(async () => (await next()) as Response);
   if (!response.headers.has('Content-Security-Policy')) setSecurityHeaders(response.headers);
   response.headers.set('X-Request-Id', requestId);
   const ms = Math.round(performance.now() - started);
