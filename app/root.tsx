@@ -65,7 +65,7 @@ export function Layout({ children }: { children: ReactNode }) {
         <meta name="viewport" content="width=device-width, initial-scale=1" />
         <meta name="color-scheme" content="light dark" />
         <Meta />
-        <Links nonce={nonce} />
+        <Links />
       </head>
       <body>
         <Progress />

@@ -12,6 +12,7 @@ import {
   saySameOnMine,
 } from '#app/features/cases/commands.server.ts';
 import { addEntry, changeEntry, removeEntry } from '#app/features/cases/entries.server.ts';
+import { loadLinks } from '#app/features/cases/link-views.server.ts';
 import { openCase } from '#app/features/cases/open-case.server.ts';
 import { listHistory, loadCaseHead, loadTalk } from '#app/features/cases/queries.server.ts';
 import { complaintSchema, openCaseSchema } from '#app/features/cases/schema.ts';
@@ -128,6 +129,19 @@ describe('the chain follows the record', () => {
     const number = await openTestCase(shop.tech);
     const outcome = await addEntry({ actor: shop.tech, number, kind, input: input as never });
     expect(outcome).toMatchObject({ ok: false, refused: 'fields', fields: { [field]: expect.any(String) } });
+  });
+
+  test('a finding is shown with what its form starts from, and changed in place', async () => {
+    const number = await openTestCase(shop.tech);
+    const added = await addEntry({ actor: shop.tech, number, kind: 'finding', input: finding });
+    const entryId = added.ok ? added.value.id : 0;
+    const { view } = await loadLinks(shop.tech, number);
+    expect(view.findings).toMatchObject([{ id: entryId, byName: shop.tech.name, values: finding }]);
+    const input = { ...finding, certainty: 'ruled-out' as const };
+    expect(
+      (await changeEntry({ actor: shop.lead, number, kind: 'finding', entryId, version: 2, input })).ok,
+    ).toBe(true);
+    expect(await stateOf(number)).toBe('open');
   });
 
   test('a removed entry leaves the chain and stays in the history', async () => {

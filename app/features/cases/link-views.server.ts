@@ -123,7 +123,7 @@ function findingView(row: Evidence['findings'][number], vocabulary: Vocabulary):
     ? `, ${nameOf(vocabulary, 'failure-mode', row.failureModeId).toLowerCase()}`
     : '';
   return {
-    ...signed({ ...row, note: '' }, row.at),
+    ...signed({ id: row.id, byName: row.byName, note: '' }, row.at),
     kind: 'finding',
     tone: row.certainty === 'confirmed' ? 'evidence' : 'plain',
     headline: `${nameOf(vocabulary, 'component', row.componentId)}${failure}`,
