@@ -2,6 +2,10 @@ import { isRouteErrorResponse } from 'react-router';
 import { ButtonLink } from '#app/components/ui/button.tsx';
 
 const WORDS: Record<number, { title: string; text: string }> = {
+  400: {
+    title: 'This could not be read',
+    text: 'The form did not arrive whole. Nothing was changed; go back and send it again.',
+  },
   401: { title: 'Sign in first', text: 'Your session has ended. What was saved is still there.' },
   403: {
     title: 'Not for your role',

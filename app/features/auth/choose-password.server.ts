@@ -1,5 +1,6 @@
 import { data, redirect } from 'react-router';
 import { fieldErrors } from '#app/features/form-fields.ts';
+import { readForm } from '#app/server/forms.server.ts';
 import { findAccountLink, spendPasswordLink } from './account-links.server.ts';
 import { newPasswordSchema } from './schema.ts';
 import { openSession } from './sessions.server.ts';
@@ -16,7 +17,7 @@ export async function loadPasswordLink(token: string, purpose: 'reset' | 'join')
 
 /** Their action: sets the password and signs in. */
 export async function choosePassword(request: Request, token: string, purpose: 'reset' | 'join') {
-  const parsed = newPasswordSchema.safeParse(Object.fromEntries(await request.formData()));
+  const parsed = newPasswordSchema.safeParse(Object.fromEntries(await readForm(request)));
   if (!parsed.success) return data({ fields: fieldErrors(parsed.error) }, { status: 400 });
   const now = new Date();
   const used = await spendPasswordLink(token, purpose, parsed.data.password, now);

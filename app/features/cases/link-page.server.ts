@@ -2,6 +2,7 @@ import type { RouterContextProvider } from 'react-router';
 import { may } from '#app/domain/permissions/matrix.ts';
 import { cautionsFor, usualProofs } from '#app/domain/vocabulary/vocabulary.ts';
 import { listCasePhotos } from '#app/features/photos/queries.server.ts';
+import { readForm } from '#app/server/forms.server.ts';
 import { orRefuse, requireActor, wholeParam } from '#app/server/guards.server.ts';
 import { requireOnCase } from './change-case.server.ts';
 import { linkChoices } from './choices.ts';
@@ -35,5 +36,5 @@ export async function linkAction({ request, context, params }: Args, link: Noted
   const viewer = requireActor(context);
   const number = wholeParam(params.number);
   await orRefuse(requireOnCase(viewer, number, 'case:edit'));
-  return handleLinkAction({ viewer, number, link, form: await request.formData() });
+  return handleLinkAction({ viewer, number, link, form: await readForm(request) });
 }

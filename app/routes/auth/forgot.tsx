@@ -4,13 +4,14 @@ import { Button } from '#app/components/ui/button.tsx';
 import { Notice } from '#app/components/ui/notice.tsx';
 import { mailResetLink } from '#app/features/auth/account-links.server.ts';
 import { emailField } from '#app/features/auth/schema.ts';
+import { readForm } from '#app/server/forms.server.ts';
 import { logger } from '#app/server/logger.server.ts';
 import type { Route } from './+types/forgot.ts';
 
 export const meta: Route.MetaFunction = () => [{ title: 'A new password · Weepmark' }];
 
 export async function action({ request }: Route.ActionArgs) {
-  const typed = String((await request.formData()).get('email') ?? '');
+  const typed = String((await readForm(request)).get('email') ?? '');
   const email = emailField.safeParse(typed);
   if (!email.success) {
     return data({ sent: false, typed, error: email.error.issues[0]?.message }, { status: 400 });

@@ -5,6 +5,7 @@ import { openSession } from '#app/features/auth/sessions.server.ts';
 import { authenticator, clientAddress, SignInRefused } from '#app/features/auth/sign-in.server.ts';
 import { typedValues } from '#app/features/form-fields.ts';
 import { viewerContext } from '#app/server/context.ts';
+import { readForm } from '#app/server/forms.server.ts';
 import { safePath } from '#app/server/redirects.server.ts';
 import type { Route } from './+types/sign-in.ts';
 
@@ -17,9 +18,10 @@ export function loader({ context, url }: Route.LoaderArgs) {
 }
 
 export async function action({ request, url }: Route.ActionArgs) {
-  const typed = typedValues(await request.clone().formData());
+  const form = await readForm(request);
+  const typed = typedValues(form);
   try {
-    const { userId } = await authenticator.authenticate('password', request);
+    const { userId } = await authenticator.authenticate('password', withForm(request, form));
     const { cookie } = await openSession({
       userId,
       userAgent: request.headers.get('User-Agent') ?? '',
@@ -31,6 +33,14 @@ export async function action({ request, url }: Route.ActionArgs) {
     if (error instanceof SignInRefused) return data({ fields: error.fields, typed }, { status: 400 });
     throw error;
   }
+}
+
+/** The strategy reads the form of a request itself. */
+function withForm({ url, headers }: Request, form: FormData): Request {
+  const sent = new Headers(headers);
+  sent.delete('Content-Type');
+  sent.delete('Content-Length');
+  return new Request(url, { method: 'POST', headers: sent, body: form });
 }
 
 export default function SignIn({ actionData }: Route.ComponentProps) {

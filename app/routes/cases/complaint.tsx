@@ -14,6 +14,7 @@ import { complaintSchema } from '#app/features/cases/schema.ts';
 import { fieldErrors, formObject, typedValues } from '#app/features/form-fields.ts';
 import { listCircuitChoices } from '#app/features/machines/queries.server.ts';
 import { refuseFields, versionToSend } from '#app/features/outcome.ts';
+import { readForm } from '#app/server/forms.server.ts';
 import { orRefuse, requireActor, wholeParam } from '#app/server/guards.server.ts';
 import { redirectWithToast } from '#app/server/redirects.server.ts';
 import type { Route } from './+types/complaint.ts';
@@ -38,7 +39,7 @@ export async function action({ request, context, params }: Route.ActionArgs) {
   const viewer = requireActor(context);
   const number = wholeParam(params.number);
   await orRefuse(requireOnCase(viewer, number, 'case:edit'));
-  const form = await request.formData();
+  const form = await readForm(request);
   const parsed = complaintSchema.safeParse(formObject(form, ['symptoms']));
   const outcome = parsed.success
     ? await orRefuse(saveComplaint({ actor: viewer, number }, parsed.data))

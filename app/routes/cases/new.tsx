@@ -14,6 +14,7 @@ import { fieldErrors, formObject, typedValues } from '#app/features/form-fields.
 import { circuitFormChoices } from '#app/features/machines/circuit-page.server.ts';
 import { listCircuitsByMachine } from '#app/features/machines/queries.server.ts';
 import { refuseFields } from '#app/features/outcome.ts';
+import { readForm } from '#app/server/forms.server.ts';
 import { orRefuse, requirePermission } from '#app/server/guards.server.ts';
 import { redirectWithToast } from '#app/server/redirects.server.ts';
 import type { Route } from './+types/new.ts';
@@ -34,7 +35,7 @@ export async function loader({ context, url }: Route.LoaderArgs) {
 
 export async function action({ request, context }: Route.ActionArgs) {
   const viewer = requirePermission(context, 'case:open');
-  const form = await request.formData();
+  const form = await readForm(request);
   const parsed = openCaseSchema.safeParse(formObject(form, ['symptoms']));
   const outcome = parsed.success
     ? await orRefuse(openCase(viewer, parsed.data, new Date()))

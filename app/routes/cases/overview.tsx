@@ -14,6 +14,7 @@ import { listMachineChoices, loadCaseHead, loadTalk } from '#app/features/cases/
 import { alikeCases } from '#app/features/find/alike.server.ts';
 import { AlikeList } from '#app/features/find/components/alike-list.tsx';
 import { listCasePhotos } from '#app/features/photos/queries.server.ts';
+import { readForm } from '#app/server/forms.server.ts';
 import { orRefuse, requireActor, wholeParam } from '#app/server/guards.server.ts';
 import type { Route } from './+types/overview.ts';
 
@@ -48,7 +49,7 @@ export async function loader({ context, params }: Route.LoaderArgs) {
 
 export async function action({ request, context, params }: Route.ActionArgs) {
   const viewer = requireActor(context);
-  return overviewAction(viewer, wholeParam(params.number), await request.formData());
+  return overviewAction(viewer, wholeParam(params.number), await readForm(request));
 }
 
 export default function Overview({ loaderData, actionData }: Route.ComponentProps) {

@@ -11,6 +11,7 @@ import { NoteEditor } from '#app/features/write-ups/components/note-editor.tsx';
 import { noteAction } from '#app/features/write-ups/note-action.server.ts';
 import { loadNoteDesk } from '#app/features/write-ups/queries.server.ts';
 import { STARTING_BODY } from '#app/features/write-ups/schema.ts';
+import { readForm } from '#app/server/forms.server.ts';
 import { orRefuse, requireActor, wholeParam } from '#app/server/guards.server.ts';
 import type { Route } from './+types/write-up.ts';
 
@@ -23,7 +24,7 @@ export async function loader({ context, params }: Route.LoaderArgs) {
 
 export async function action({ request, context, params }: Route.ActionArgs) {
   const viewer = requireActor(context);
-  return noteAction(viewer, wholeParam(params.number), await request.formData());
+  return noteAction(viewer, wholeParam(params.number), await readForm(request));
 }
 
 export default function CaseWriteUp({ loaderData, actionData }: Route.ComponentProps) {

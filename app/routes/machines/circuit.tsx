@@ -4,6 +4,7 @@ import { circuitAction, circuitFormChoices } from '#app/features/machines/circui
 import { CircuitForm } from '#app/features/machines/components/circuit-form.tsx';
 import { loadCircuit } from '#app/features/machines/queries.server.ts';
 import { listCircuitPhotos } from '#app/features/photos/queries.server.ts';
+import { readForm } from '#app/server/forms.server.ts';
 import { orRefuse, requirePermission, wholeParam } from '#app/server/guards.server.ts';
 import type { Route } from './+types/circuit.ts';
 
@@ -26,7 +27,7 @@ export async function loader({ context, params }: Route.LoaderArgs) {
 
 export async function action({ request, context, params }: Route.ActionArgs) {
   const viewer = requirePermission(context, 'machine:edit');
-  return circuitAction(viewer, wholeParam(params.id), wholeParam(params.circuitId), await request.formData());
+  return circuitAction(viewer, wholeParam(params.id), wholeParam(params.circuitId), await readForm(request));
 }
 
 export default function Circuit({ loaderData, actionData }: Route.ComponentProps) {

@@ -7,6 +7,7 @@ import { MachineForm } from '#app/features/machines/components/machine-form.tsx'
 import { findMachine, listMachineKinds, loadMachine } from '#app/features/machines/queries.server.ts';
 import { machineSchema } from '#app/features/machines/schema.ts';
 import { refuseFields } from '#app/features/outcome.ts';
+import { readForm } from '#app/server/forms.server.ts';
 import { orRefuse, requirePermission, wholeParam } from '#app/server/guards.server.ts';
 import { redirectWithToast } from '#app/server/redirects.server.ts';
 import type { Route } from './+types/edit.ts';
@@ -30,7 +31,7 @@ export async function action({ request, context, params }: Route.ActionArgs) {
   const viewer = requirePermission(context, 'machine:edit');
   const machineId = wholeParam(params.id);
   await orRefuse(findMachine(viewer, machineId));
-  const form = await request.formData();
+  const form = await readForm(request);
   const version = Number(form.get('version')) || undefined;
   const parsed = machineSchema.safeParse(formObject(form));
   const outcome = parsed.success

@@ -4,6 +4,7 @@ import { Button, ButtonLink } from '#app/components/ui/button.tsx';
 import { Notice } from '#app/components/ui/notice.tsx';
 import { PageHeader } from '#app/components/ui/page-header.tsx';
 import { importFleet, previewFleet } from '#app/features/machines/fleet-import.server.ts';
+import { readForm } from '#app/server/forms.server.ts';
 import { orRefuse, requirePermission } from '#app/server/guards.server.ts';
 import { redirectWithToast } from '#app/server/redirects.server.ts';
 import type { Route } from './+types/import.ts';
@@ -19,7 +20,7 @@ export function loader({ context }: Route.LoaderArgs) {
 
 export async function action({ request, context }: Route.ActionArgs) {
   const viewer = requirePermission(context, 'machine:import');
-  const form = await request.formData();
+  const form = await readForm(request);
   const file = form.get('file');
   const csv = file instanceof File && file.size > 0 ? await file.text() : String(form.get('csv') ?? '');
   if (csv.length > MOST_LETTERS) {

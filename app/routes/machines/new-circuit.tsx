@@ -2,6 +2,7 @@ import { PageHeader } from '#app/components/ui/page-header.tsx';
 import { circuitAction, circuitFormChoices } from '#app/features/machines/circuit-page.server.ts';
 import { CircuitForm } from '#app/features/machines/components/circuit-form.tsx';
 import { findMachine } from '#app/features/machines/queries.server.ts';
+import { readForm } from '#app/server/forms.server.ts';
 import { orRefuse, requirePermission, wholeParam } from '#app/server/guards.server.ts';
 import type { Route } from './+types/new-circuit.ts';
 
@@ -15,7 +16,7 @@ export async function loader({ context, params }: Route.LoaderArgs) {
 
 export async function action({ request, context, params }: Route.ActionArgs) {
   const viewer = requirePermission(context, 'machine:edit');
-  return circuitAction(viewer, wholeParam(params.id), null, await request.formData());
+  return circuitAction(viewer, wholeParam(params.id), null, await readForm(request));
 }
 
 export default function NewCircuit({ loaderData, actionData }: Route.ComponentProps) {

@@ -7,6 +7,7 @@ import { MachineForm } from '#app/features/machines/components/machine-form.tsx'
 import { listMachineKinds } from '#app/features/machines/queries.server.ts';
 import { machineSchema } from '#app/features/machines/schema.ts';
 import { refuseFields } from '#app/features/outcome.ts';
+import { readForm } from '#app/server/forms.server.ts';
 import { orRefuse, requirePermission } from '#app/server/guards.server.ts';
 import { redirectWithToast } from '#app/server/redirects.server.ts';
 import type { Route } from './+types/new.ts';
@@ -20,7 +21,7 @@ export async function loader({ context }: Route.LoaderArgs) {
 
 export async function action({ request, context }: Route.ActionArgs) {
   const viewer = requirePermission(context, 'machine:edit');
-  const form = await request.formData();
+  const form = await readForm(request);
   const parsed = machineSchema.safeParse(formObject(form));
   const outcome = parsed.success
     ? await orRefuse(createMachine(viewer, parsed.data, new Date()))

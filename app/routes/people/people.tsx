@@ -13,6 +13,7 @@ import { fieldErrors, formObject, typedValues } from '#app/features/form-fields.
 import { refuseFields } from '#app/features/outcome.ts';
 import { addPerson, addYard, listPeople } from '#app/features/people/people.server.ts';
 import { addPersonSchema, yardSchema } from '#app/features/people/schema.ts';
+import { readForm } from '#app/server/forms.server.ts';
 import { orRefuse, requirePermission } from '#app/server/guards.server.ts';
 import { redirectWithToast } from '#app/server/redirects.server.ts';
 import type { Route } from './+types/people.ts';
@@ -26,7 +27,7 @@ export async function loader({ context }: Route.LoaderArgs) {
 
 export async function action({ request, context }: Route.ActionArgs) {
   const viewer = requirePermission(context, 'people:manage');
-  const form = await request.formData();
+  const form = await readForm(request);
   const intent = String(form.get('intent') ?? '');
   if (intent === 'add-yard') {
     const parsed = yardSchema.safeParse(formObject(form));

@@ -16,6 +16,7 @@ import {
   setActive,
 } from '#app/features/people/people.server.ts';
 import { changePersonSchema } from '#app/features/people/schema.ts';
+import { readForm } from '#app/server/forms.server.ts';
 import { orRefuse, requirePermission, wholeParam } from '#app/server/guards.server.ts';
 import { redirectWithToast } from '#app/server/redirects.server.ts';
 import type { Route } from './+types/person.ts';
@@ -33,7 +34,7 @@ export async function action({ request, context, params }: Route.ActionArgs) {
   const viewer = requirePermission(context, 'people:manage');
   const userId = wholeParam(params.id);
   await orRefuse(loadPerson(viewer, userId, new Date()));
-  const form = await request.formData();
+  const form = await readForm(request);
   const intent = String(form.get('intent') ?? '');
   const outcome = await orRefuse(run());
   if (outcome.ok) return redirectWithToast(`/people/${userId}`, SAID[intent] ?? 'Saved.');

@@ -1,5 +1,6 @@
 import { data } from 'react-router';
 import { changePhoto, photoChangeSchema } from '#app/features/photos/commands.server.ts';
+import { readForm } from '#app/server/forms.server.ts';
 import { orRefuse, requirePermission, wholeParam } from '#app/server/guards.server.ts';
 import { redirectWithToast, safePath } from '#app/server/redirects.server.ts';
 import type { Route } from './+types/photo.ts';
@@ -17,7 +18,7 @@ export function loader() {
 
 export async function action({ request, context, params }: Route.ActionArgs) {
   const viewer = requirePermission(context, 'photo:add');
-  const form = Object.fromEntries(await request.formData());
+  const form = Object.fromEntries(await readForm(request));
   const parsed = photoChangeSchema.safeParse(form);
   if (!parsed.success) throw data(null, { status: 400 });
   await orRefuse(changePhoto(viewer, wholeParam(params.id), parsed.data, new Date()));

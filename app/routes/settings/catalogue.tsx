@@ -16,6 +16,7 @@ import {
 import { listCatalogue, shopVocabulary } from '#app/features/catalogue/queries.server.ts';
 import { fieldErrors, formObject, typedValues } from '#app/features/form-fields.ts';
 import { refuseFields } from '#app/features/outcome.ts';
+import { readForm } from '#app/server/forms.server.ts';
 import { orRefuse, requirePermission } from '#app/server/guards.server.ts';
 import { redirectWithToast } from '#app/server/redirects.server.ts';
 import type { Route } from './+types/catalogue.ts';
@@ -34,7 +35,7 @@ export async function loader({ context, url }: Route.LoaderArgs) {
 
 export async function action({ request, context }: Route.ActionArgs) {
   const viewer = requirePermission(context, 'catalogue:manage');
-  const form = await request.formData();
+  const form = await readForm(request);
   const intent = String(form.get('intent') ?? '');
   const now = new Date();
   if (intent === 'add') {

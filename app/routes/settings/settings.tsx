@@ -19,6 +19,7 @@ import {
 import { endSessions, listOwnSessions } from '#app/features/auth/sessions.server.ts';
 import { fieldErrors, formObject } from '#app/features/form-fields.ts';
 import { saveUnits, unitsSchema } from '#app/features/people/settings.server.ts';
+import { readForm } from '#app/server/forms.server.ts';
 import { orRefuse, requireActor } from '#app/server/guards.server.ts';
 import { redirectWithToast } from '#app/server/redirects.server.ts';
 import type { Route } from './+types/settings.ts';
@@ -37,7 +38,7 @@ export async function loader({ context }: Route.LoaderArgs) {
 
 export async function action({ request, context }: Route.ActionArgs) {
   const viewer = requireActor(context);
-  const form = await request.formData();
+  const form = await readForm(request);
   const intent = String(form.get('intent') ?? '');
   switch (intent) {
     case 'units': {

@@ -1,5 +1,6 @@
 import { redirect } from 'react-router';
 import { schemeCookie } from '#app/server/cookies.server.ts';
+import { readForm } from '#app/server/forms.server.ts';
 import { safePath } from '#app/server/redirects.server.ts';
 import type { Route } from './+types/scheme.ts';
 
@@ -8,7 +9,7 @@ export function loader() {
 }
 
 export async function action({ request }: Route.ActionArgs) {
-  const form = await request.formData();
+  const form = await readForm(request);
   const scheme = form.get('scheme');
   const chosen = scheme === 'daylight' || scheme === 'lamp' ? scheme : 'system';
   return redirect(safePath(form.get('to'), '/'), {

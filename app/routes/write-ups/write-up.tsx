@@ -13,6 +13,7 @@ import { refuseFields } from '#app/features/outcome.ts';
 import { answerFlag, flagWriteUp } from '#app/features/write-ups/commands.server.ts';
 import { type ChangedPart, loadWriteUp } from '#app/features/write-ups/queries.server.ts';
 import { wordsSchema } from '#app/features/write-ups/schema.ts';
+import { readForm } from '#app/server/forms.server.ts';
 import { orRefuse, requireActor } from '#app/server/guards.server.ts';
 import { redirectWithToast } from '#app/server/redirects.server.ts';
 import type { Route } from './+types/write-up.ts';
@@ -28,7 +29,7 @@ export async function loader({ context, params }: Route.LoaderArgs) {
 export async function action({ request, context, params }: Route.ActionArgs) {
   const viewer = requireActor(context);
   const { caseNumber: number, slug } = await orRefuse(loadWriteUp(viewer, params.slug));
-  const form = await request.formData();
+  const form = await readForm(request);
   const intent = String(form.get('intent') ?? '');
   if (intent !== 'flag' && intent !== 'answer') throw data(null, { status: 400 });
   const flagId = Number(form.get('flagId')) || 0;
