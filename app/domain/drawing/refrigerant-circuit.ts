@@ -23,7 +23,7 @@ export const REFRIGERANT_SPOTS: readonly Spot[] = [
   { id: 'relief-valve', x: 136, y: 416, branch: false },
   { id: 'discharge-hose', x: 84, y: 484, branch: false },
   { id: 'condenser', x: 190, y: 516, branch: false },
-  { id: 'condenser-joint', x: 286, y: 484, branch: false },
+  { id: 'condenser-joint', x: 284, y: 516, branch: false },
   { id: 'service-valve-hp', x: 312, y: 408, branch: false },
   { id: 'liquid-line', x: 312, y: 340, branch: false },
   { id: 'pressure-switch', x: 312, y: 276, branch: false },
@@ -37,7 +37,7 @@ export const REFRIGERANT_SPOTS: readonly Spot[] = [
 
 /** The pipes, as paths: which side of the circuit, and whether of the second branch. */
 export const PIPES: readonly { side: 'low' | 'high'; branch: boolean; path: string }[] = [
-  { side: 'low', branch: false, path: 'M128 44H40V352H84' },
+  { side: 'low', branch: false, path: 'M128 44H40V352H84V384' },
   { side: 'high', branch: false, path: 'M84 448V516H120' },
   { side: 'high', branch: false, path: 'M252 516H312V44H222' },
   { side: 'high', branch: true, path: 'M312 120H232V208H200' },

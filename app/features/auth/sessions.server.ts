@@ -26,6 +26,7 @@ export async function openSession({
     userAgent: userAgent.slice(0, 190),
     address: address.slice(0, 60),
   });
+  await User.update({ lastSeenAt: now }, { where: { id: userId } });
   return { cookie: await sessionCookie.serialize(token) };
 }
 

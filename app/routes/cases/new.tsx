@@ -5,7 +5,7 @@ import { FormErrors, MeasureField, SelectField, TextArea, TextField } from '#app
 import { Button } from '#app/components/ui/button.tsx';
 import { PageHeader } from '#app/components/ui/page-header.tsx';
 import { symptomChips, unitChoices } from '#app/features/cases/choices.ts';
-import { AlikeWhileTyping } from '#app/features/cases/components/alike-while-typing.tsx';
+import { AlikePanel, useAlike } from '#app/features/cases/components/alike-while-typing.tsx';
 import { openCase } from '#app/features/cases/open-case.server.ts';
 import { listMachineChoices } from '#app/features/cases/queries.server.ts';
 import { openCaseSchema } from '#app/features/cases/schema.ts';
@@ -63,6 +63,7 @@ export default function NewCase({ loaderData, actionData }: Route.ComponentProps
   const medium =
     own.find(({ value }) => value === circuit)?.medium ??
     (circuit.includes(':') ? (circuit.split(':')[0] ?? '') : own.length === 1 ? (own[0]?.medium ?? '') : '');
+  const alike = useAlike({ text: complaint, symptoms: symptoms.join(','), medium, machine });
   const groups = [
     ...(own.length > 0
       ? [{ label: 'On this machine', options: own.map(({ value, label }) => ({ value, label })) }]
@@ -82,7 +83,7 @@ export default function NewCase({ loaderData, actionData }: Route.ComponentProps
             <TextField
               name="machine"
               label="Machine"
-              hint="Its own number, or part of its name."
+              hint="Its own number; typing the model shows which fit."
               list="machines"
               autoCapitalize="characters"
               autoComplete="off"
@@ -119,6 +120,9 @@ export default function NewCase({ loaderData, actionData }: Route.ComponentProps
             onChange={(event) => setComplaint(event.target.value)}
             error={errors.complaint}
           />
+          <div className="xl:hidden">
+            <AlikePanel {...alike} />
+          </div>
           <ChipPicker
             legend="Symptoms"
             name="symptoms"
@@ -161,13 +165,8 @@ export default function NewCase({ loaderData, actionData }: Route.ComponentProps
             </Button>
           </div>
         </Form>
-        <div className="xl:sticky xl:top-6">
-          <AlikeWhileTyping
-            text={complaint}
-            symptoms={symptoms.join(',')}
-            medium={medium}
-            machine={machine}
-          />
+        <div className="xl:sticky xl:top-6 max-xl:hidden">
+          <AlikePanel {...alike} />
         </div>
       </div>
     </>

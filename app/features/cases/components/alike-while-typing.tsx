@@ -4,13 +4,14 @@ import { Skeleton } from '#app/components/ui/skeleton.tsx';
 import type { AlikeHit } from '#app/features/find/alike.server.ts';
 import { AlikeList } from '#app/features/find/components/alike-list.tsx';
 
-type Props = { text: string; symptoms: string; medium: string; machine: string };
+type Draft = { text: string; symptoms: string; medium: string; machine: string };
+type Alike = { hits: AlikeHit[] | undefined; busy: boolean };
 
 const PAUSE_MS = 350;
 const ENOUGH_LETTERS = 6;
 
-/** Alike solved cases beside a complaint that is being written; it asks a moment after the last key. */
-export function AlikeWhileTyping({ text, symptoms, medium, machine }: Props) {
+/** The solved cases like a complaint that is being written; asks a moment after the last key. */
+export function useAlike({ text, symptoms, medium, machine }: Draft): Alike {
   const { load, data, state } = useFetcher<{ hits: AlikeHit[] }>();
   const asked = useRef('');
   useEffect(() => {
@@ -23,21 +24,25 @@ export function AlikeWhileTyping({ text, symptoms, medium, machine }: Props) {
     }, PAUSE_MS);
     return () => clearTimeout(timer);
   }, [text, symptoms, medium, machine, load]);
+  return { hits: data?.hits, busy: state !== 'idle' };
+}
+
+export function AlikePanel({ hits, busy }: Alike) {
   return (
     <section
       aria-label="Alike solved cases"
-      aria-busy={state !== 'idle'}
+      aria-busy={busy}
       className="rounded-xl border border-line bg-surface p-4"
     >
       <h2 className="font-semibold">Solved before</h2>
-      {data === undefined && state !== 'idle' ? (
+      {hits === undefined && busy ? (
         <Skeleton label="Looking for solved cases" />
-      ) : data === undefined ? (
+      ) : hits === undefined ? (
         <p className="text-muted">While you write, solved cases like this one appear here.</p>
-      ) : data.hits.length === 0 ? (
+      ) : hits.length === 0 ? (
         <p className="text-muted">Nothing like it yet.</p>
       ) : (
-        <AlikeList hits={data.hits} newTab />
+        <AlikeList hits={hits} newTab />
       )}
     </section>
   );
