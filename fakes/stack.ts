@@ -25,6 +25,9 @@ export type Stack = {
   stop(): Promise<void>;
 };
 
+/** The tests keep away from the ports of a copy that may be running beside them. */
+const TEST_PORTS_APART = 20_000;
+
 /** The data folder of this copy. */
 export function dataFolder(): string {
   return path.resolve(process.env.WEEPMARK_DATA || path.join(ROOT, '.data'));
@@ -64,7 +67,10 @@ export async function startStack({
   const secrets = await readSecrets(folder);
   const taken = new Set<number>();
   const choose = async (name: string, usual: number) => {
-    const port = await choosePort(name, process.env[name], usual, taken);
+    const port =
+      mode === 'test'
+        ? await choosePort(name, undefined, usual + TEST_PORTS_APART, taken)
+        : await choosePort(name, process.env[name], usual, taken);
     taken.add(port);
     return port;
   };

@@ -19,6 +19,8 @@ type Change<T> = {
   /** The link's present values, shown to the person who came second. */
   present?: (row: Case, transaction: Transaction) => Promise<Record<string, string>> | Record<string, string>;
   audit: { action: string; detail?: Record<string, unknown> };
+  /** When it happened; now, unless an older record is entered. */
+  at?: Date;
   change: (row: Case, transaction: Transaction) => Promise<Outcome<T>>;
 };
 
@@ -38,7 +40,7 @@ export async function requireOnCase(actor: Actor, number: number, needs: Action)
 
 /** The one way in which a case changes: authorised, locked, checked against what the person saw, written to the history, settled. */
 export async function changeCase<T>(options: Change<T>): Promise<Outcome<T>> {
-  const { actor, number, needs, link, version, present, audit, change } = options;
+  const { actor, number, needs, link, version, present, audit, at = new Date(), change } = options;
   return transact(async (transaction) => {
     const row = await findCaseRow(actor, number, transaction);
     if (!may(actor.role, needs)) throw new Forbidden();
@@ -51,10 +53,10 @@ export async function changeCase<T>(options: Change<T>): Promise<Outcome<T>> {
     await row.save({ transaction });
     const detail = { ...(link ? { link } : {}), ...audit.detail };
     await recordAudit(
-      { actor, action: audit.action, subject: link ?? 'case', subjectId: row.id, caseId: row.id, detail },
+      { actor, action: audit.action, subject: link ?? 'case', subjectId: row.id, caseId: row.id, detail, at },
       transaction,
     );
-    await settleCase(row.id, transaction);
+    await settleCase(row.id, transaction, at);
     return outcome;
   });
 }

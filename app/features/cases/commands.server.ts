@@ -148,6 +148,7 @@ export async function returnToWork(target: Target, back: boolean, now: Date): Pr
     ...target,
     needs: 'case:edit',
     audit: { action: back ? 'back-to-work' : 'taken-off-work' },
+    at: now,
     async change(row, transaction) {
       if (back && !provedTight(caseRecord(row, await loadEvidence(row.id, transaction)))) {
         return refuseFields({ '': 'The newest proof does not say tight, so the machine stays here.' });
@@ -169,6 +170,7 @@ export async function addComment({ actor, number }: Target, body: string, now: D
     number,
     needs: 'case:comment',
     audit: { action: 'commented' },
+    at: now,
     async change(row, transaction) {
       await Comment.create(
         { shopId: row.shopId, caseId: row.id, byId: actor.userId, byName: actor.name, body, at: now },
@@ -216,6 +218,7 @@ export async function saySameOnMine(
     number,
     needs: 'case:same-on-mine',
     audit: { action: 'same-on-mine', detail: { machine, note } },
+    at: now,
     async change(row, transaction) {
       const found = await Machine.findOne({ where: { shopId: row.shopId, number: machine }, transaction });
       if (!found) return refuseFields({ machine: 'No machine of this shop has this number.' });

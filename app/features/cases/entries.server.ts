@@ -44,6 +44,7 @@ export async function addEntry<K extends EntryKind>({
     needs: 'case:edit',
     link: ENTRY_LINKS[kind],
     audit: { action: 'entry-added', detail: { kind, ...input } },
+    at,
     async change(row, transaction) {
       const { values, fields } = entryValues(kind, input, { medium: row.medium, vocabulary });
       if (Object.keys(fields).length > 0) return refuseFields(fields);

@@ -32,6 +32,7 @@ async function changeNote<T>(
   needs: Action,
   action: string,
   detail: Record<string, unknown>,
+  at: Date,
   change: (row: Case, note: WriteUp | null, transaction: Transaction) => Promise<Outcome<T>>,
 ): Promise<Outcome<T>> {
   return transact(async (transaction) => {
@@ -45,10 +46,10 @@ async function changeNote<T>(
     const outcome = await change(row, note, transaction);
     if (!outcome.ok) return outcome;
     await recordAudit(
-      { actor, action, subject: 'write-up', subjectId: row.id, caseId: row.id, detail },
+      { actor, action, subject: 'write-up', subjectId: row.id, caseId: row.id, detail, at },
       transaction,
     );
-    await settleCase(row.id, transaction);
+    await settleCase(row.id, transaction, at);
     return outcome;
   });
 }
@@ -61,6 +62,7 @@ export async function saveWriteUp(target: Target, input: WriteUpInput, now: Date
     'write-up:write',
     'note-saved',
     { title: input.title },
+    now,
     async (row, note, transaction) => {
       const photoIds = await ownPhotos(row.id, input.photos, transaction);
       const values = { title: input.title, body: input.body, photoIds, updatedAt: now };
@@ -149,7 +151,7 @@ async function freeSlug(row: Case, title: string, transaction: Transaction): Pro
 }
 
 export async function submitWriteUp(target: Target, now: Date): Promise<Outcome> {
-  return changeNote(target, 'write-up:write', 'note-submitted', {}, async (_row, note, transaction) => {
+  return changeNote(target, 'write-up:write', 'note-submitted', {}, now, async (_row, note, transaction) => {
     const state = note && nextWriteUpState(note.state, 'submit');
     if (!note || !state) return refuseFields({ '': 'Only a draft can go to review.' });
     await note.update({ state, updatedAt: now, version: note.version + 1 }, { transaction });
@@ -164,6 +166,7 @@ export async function sendBackWriteUp(target: Target, remark: string, now: Date)
     'write-up:review',
     'note-sent-back',
     { remark },
+    now,
     async (row, note, transaction) => {
       const state = note && nextWriteUpState(note.state, 'send-back');
       if (!note || !state) return refuseFields({ '': 'Only a note in review can be sent back.' });
@@ -202,6 +205,7 @@ export async function publishWriteUp(
     'write-up:review',
     'note-published',
     detail,
+    now,
     async (row, found, transaction) => {
       if (!found && !input) return refuseFields({ '': 'Write the note first.' });
       const state = found ? nextWriteUpState(found.state, 'publish') : 'published';
@@ -277,6 +281,7 @@ export async function withdrawWriteUp(target: Target, reason: string, now: Date)
     'write-up:review',
     'note-withdrawn',
     { reason },
+    now,
     async (_row, note, transaction) => {
       const state = note && nextWriteUpState(note.state, 'withdraw');
       if (!note || !state) return refuseFields({ '': 'Only a published note can be withdrawn.' });
@@ -293,21 +298,28 @@ export async function withdrawWriteUp(target: Target, reason: string, now: Date)
 /** Anyone signed in can point out an error in a published note. */
 export async function flagWriteUp(target: Target, words: string, now: Date): Promise<Outcome> {
   const { actor } = target;
-  return changeNote(target, 'write-up:flag', 'note-flagged', { words }, async (row, note, transaction) => {
-    if (note?.state !== 'published') return refuseFields({ '': 'Only a published note can be flagged.' });
-    await WriteUpFlag.create(
-      {
-        shopId: row.shopId,
-        writeUpId: note.id,
-        body: words,
-        at: now,
-        byId: actor.userId,
-        byName: actor.name,
-      },
-      { transaction },
-    );
-    return done();
-  });
+  return changeNote(
+    target,
+    'write-up:flag',
+    'note-flagged',
+    { words },
+    now,
+    async (row, note, transaction) => {
+      if (note?.state !== 'published') return refuseFields({ '': 'Only a published note can be flagged.' });
+      await WriteUpFlag.create(
+        {
+          shopId: row.shopId,
+          writeUpId: note.id,
+          body: words,
+          at: now,
+          byId: actor.userId,
+          byName: actor.name,
+        },
+        { transaction },
+      );
+      return done();
+    },
+  );
 }
 
 export async function answerFlag(
@@ -322,6 +334,7 @@ export async function answerFlag(
     'write-up:review',
     'flag-answered',
     { answer },
+    now,
     async (_row, note, transaction) => {
       const flag =
         note && (await WriteUpFlag.findOne({ where: { id: flagId, writeUpId: note.id }, transaction }));

@@ -182,6 +182,19 @@ export async function seedLiveCases(crew: Crew, now: Date): Promise<PlacedPhoto[
     note: 'It was open for two days.',
   });
 
+  accepted(
+    await saveWriteUp(
+      { actor: rhedyn, number: repaired },
+      {
+        title: 'A clamp that is gone cracks the nut',
+        body: 'Started while it is fresh.\n\n- liquid line shakes, nut cracks across two flats\n- clamp was missing since the wash',
+        photos: [],
+        version: undefined,
+      },
+      hoursAgo(49),
+    ),
+  );
+
   const parked = await open(jesk, 170, {
     machine: 'G05',
     circuit: 'hydraulic-oil:boom-lift',
