@@ -54,6 +54,8 @@ export async function openCase(
       return refuseFields({
         machine: 'No machine of this shop has this number. Add it under Machines first.',
       });
+    if (unknown.length > 0)
+      return refuseFields({ symptoms: 'A symptom is not in the catalogue. Choose others.' });
     const circuits = await Circuit.findAll({
       where: { machineId: machine.id },
       order: [['id', 'ASC']],
@@ -69,8 +71,6 @@ export async function openCase(
       now,
     );
     if (!(circuit instanceof Circuit)) return refuseFields(circuit);
-    if (unknown.length > 0)
-      return refuseFields({ symptoms: 'A symptom is not in the catalogue. Choose others.' });
     const number = await nextCaseNumber(actor.shopId, transaction);
     const row = await Case.create(
       {
