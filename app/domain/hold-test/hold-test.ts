@@ -60,8 +60,10 @@ type Model = { rss: number; bic: number; fitted: number[] };
 type Models = {
   flat: Model;
   rising: Model & { slope: number; slopeError: number };
-  levelling: (Model & { plateauPa: number; tauSeconds: number; startPa: number }) | null;
-  both: (Model & { slope: number; slopeError: number }) | null;
+  levelling: Levelling | null;
+  /** The best of those that have levelled out by the end of the test. */
+  levelled: Levelling | null;
+  both: Both | null;
   best: Model;
 };
 
@@ -83,11 +85,11 @@ function fitModels(seconds: number[], pressures: number[], airPa: number, resolu
     pressures.map(() => mean),
   );
   const rising = fitRising(seconds, pressures, airPa, scored);
-  const { levelling, both } = fitLevelling(seconds, pressures, scored);
+  const { levelling, levelled, both } = fitLevelling(seconds, pressures, scored);
   const best = [flat, rising, levelling, both]
     .filter((model) => model !== null)
     .reduce((x, y) => (y.bic < x.bic ? y : x));
-  return { flat, rising, levelling, both, best };
+  return { flat, rising, levelling, levelled, both, best };
 }
 
 type Score = (rss: number, parameters: number, fitted: number[]) => Model;
@@ -110,45 +112,76 @@ function fitRising(seconds: number[], pressures: number[], airPa: number, scored
   };
 }
 
+type Levelling = Model & { plateauPa: number; tauSeconds: number };
+type Both = Model & { slope: number; slopeError: number };
+
+/** The longest time constant, in lengths of the test, of a rise that has levelled out by its end. */
+const LEVEL_BY_END = 0.6;
+
 /** A rise that levels out, p = a − b·exp(−t/τ), alone and with a leak beside it; τ is searched, the rest is linear. */
 function fitLevelling(
   seconds: number[],
   pressures: number[],
   scored: Score,
-): Pick<Models, 'levelling' | 'both'> {
+): Pick<Models, 'levelling' | 'levelled' | 'both'> {
   const first = seconds[0] ?? 0;
-  const duration = (seconds.at(-1) ?? 0) - first;
-  let levelling: Models['levelling'] = null;
-  let both: Models['both'] = null;
-  for (let step = 0; step <= 60; step += 1) {
-    const tauSeconds = duration * 0.02 * 150 ** (step / 60);
-    const decay = seconds.map((time) => Math.exp(-(time - first) / tauSeconds));
-    const alone = leastSquares(
+  const times = seconds.map((time) => time - first);
+  const duration = times.at(-1) ?? 0;
+  const decays = (tau: number) => times.map((time) => Math.exp(-time / tau));
+  const alone = (tau: number): Levelling | null => {
+    const decay = decays(tau);
+    const fit = leastSquares(
       decay.map((value) => [1, value]),
       pressures,
     );
-    if (alone && alone.rss < (levelling?.rss ?? Number.POSITIVE_INFINITY)) {
-      const [plateauPa = 0, drop = 0] = alone.coefficients;
-      const fitted = decay.map((value) => plateauPa + drop * value);
-      levelling = { ...scored(alone.rss, 3, fitted), plateauPa, tauSeconds, startPa: plateauPa + drop };
-    }
-    const mixed = leastSquares(
-      decay.map((value, place) => [1, value, (seconds[place] as number) - first]),
+    if (!fit) return null;
+    const [plateauPa = 0, drop = 0] = fit.coefficients;
+    return {
+      ...scored(
+        fit.rss,
+        3,
+        decay.map((value) => plateauPa + drop * value),
+      ),
+      plateauPa,
+      tauSeconds: tau,
+    };
+  };
+  const mixed = (tau: number): Both | null => {
+    const decay = decays(tau);
+    const fit = leastSquares(
+      decay.map((value, place) => [1, value, times[place] as number]),
       pressures,
     );
-    if (mixed && mixed.rss < (both?.rss ?? Number.POSITIVE_INFINITY)) {
-      const [level = 0, drop = 0, slope = 0] = mixed.coefficients;
-      const fitted = decay.map(
-        (value, place) => level + drop * value + slope * ((seconds[place] as number) - first),
-      );
-      both = {
-        ...scored(mixed.rss, 4, fitted),
-        slope,
-        slopeError: mixed.errors[2] ?? Number.POSITIVE_INFINITY,
-      };
+    if (!fit) return null;
+    const [level = 0, drop = 0, slope = 0] = fit.coefficients;
+    const fitted = decay.map((value, place) => level + drop * value + slope * (times[place] as number));
+    return { ...scored(fit.rss, 4, fitted), slope, slopeError: fit.errors[2] ?? Number.POSITIVE_INFINITY };
+  };
+  return {
+    levelling: bestTau(alone, 0.02 * duration, 3 * duration),
+    levelled: bestTau(alone, 0.02 * duration, LEVEL_BY_END * duration),
+    both: bestTau(mixed, 0.02 * duration, 3 * duration),
+  };
+}
+
+/** The fit with the least squares over a time constant between two bounds: a coarse search, then a fine one around its best. */
+function bestTau<M extends Model>(fitAt: (tau: number) => M | null, low: number, high: number): M | null {
+  let [from, to] = [Math.log(low), Math.log(high)];
+  let best: M | null = null;
+  for (let round = 0; round < 4; round += 1) {
+    const step = (to - from) / 16;
+    let middle = from;
+    let bestHere = Number.POSITIVE_INFINITY;
+    for (let place = 0; place <= 16; place += 1) {
+      const model = fitAt(Math.exp(from + place * step));
+      if (!model || model.rss >= bestHere) continue;
+      bestHere = model.rss;
+      middle = from + place * step;
+      if (!best || model.rss < best.rss) best = model;
     }
+    [from, to] = [Math.max(middle - step, Math.log(low)), Math.min(middle + step, Math.log(high))];
   }
-  return { levelling, both };
+  return best;
 }
 
 function squares(one: readonly number[], other: readonly number[]): number {
@@ -175,7 +208,7 @@ const STRONG = 6;
 
 function judge(evidence: Evidence): Judgement {
   const { test, seconds, pressures, airPa, models, visiblePa, duration } = evidence;
-  const { flat, rising, levelling, both } = models;
+  const { flat, rising, levelling, levelled, both } = models;
   const waterPa = waterVapourPa(test.ambientC);
   const last = Math.max(pressures.at(-1) ?? 0, pressures.at(-2) ?? 0);
   const fittedRise = (model: Model) => (model.fitted.at(-1) ?? 0) - (model.fitted[0] ?? 0);
@@ -257,7 +290,7 @@ function judge(evidence: Evidence): Judgement {
     levelling !== null &&
     both.bic + STRONG < levelling.bic &&
     both.slope > 4 * both.slopeError &&
-    both.slope * duration > visiblePa;
+    both.slope * duration > Math.max(visiblePa, 0.05 * rise);
   if (bends && levelling && !leaksToo) return judgeLevel(test, levelling, waterPa, rising);
   if (bends && leaksToo && both) {
     return {
@@ -266,6 +299,18 @@ function judge(evidence: Evidence): Judgement {
       fitted: both.fitted,
       reasons: [
         'It bends at first, as gas or water boils off, then keeps rising in a straight line: something leaks in.',
+      ],
+    };
+  }
+  const underWater = last <= 1.1 * waterPa + test.resolutionPa;
+  if (underWater && levelled && levelled.bic < rising.bic + STRONG) {
+    return {
+      verdict: 'cannot-tell',
+      leakPaM3PerS: null,
+      fitted: rising.fitted,
+      reasons: [
+        'It rises, but this gauge cannot tell a straight line from one that levels out: a leak and moisture would look the same.',
+        finer(test),
       ],
     };
   }
@@ -287,7 +332,7 @@ function judge(evidence: Evidence): Judgement {
 
 function judgeLevel(
   test: HoldTest,
-  levelling: NonNullable<Models['levelling']>,
+  levelling: Levelling,
   waterPa: number,
   rising: Models['rising'],
 ): Judgement {
