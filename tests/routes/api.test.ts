@@ -184,6 +184,11 @@ describe('the API', () => {
       '/api/v1/find',
       '/api/v1/machines',
       '/api/v1/machines/{id}',
+      '/api/v1/reference/charge-window',
+      '/api/v1/reference/hold-test',
+      '/api/v1/reference/leak-rate',
+      '/api/v1/reference/saturation',
+      '/api/v1/reference/vacuum',
     ]);
     expect(document.components.schemas).toHaveProperty('Error');
   });

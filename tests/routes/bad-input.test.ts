@@ -47,6 +47,8 @@ const ADDRESSES: [string, 'lead' | 'admin'][] = [
   ['/api/v1/cases/import', 'lead'],
   ['/api/v1/cases/:number/photos', 'lead'],
   ['/api/v1/machines', 'lead'],
+  ['/api/v1/reference/hold-test', 'lead'],
+  ['/api/v1/reference/leak-rate', 'lead'],
 ];
 
 const LONG = 'ж'.repeat(30_000);
@@ -174,6 +176,13 @@ test.each([
   '/cases/:number/history?page=-5',
   '/cases/:number/trace?part=%3Cscript%3E&edit=finding-99999999999',
   '/reference/glossary?q=%F0%9F%98%80',
+  '/reference/pressures?refrigerant=x&temperature=1e99&altitude=-9999999&pressureUnit=__proto__',
+  '/reference/pressures?refrigerant=R-744&temperature=90',
+  '/reference/hold-test?samples=abc&gauge=x&step=0&litres=-1&ambient=NaN&altitude=%00',
+  '/reference/hold-test?samples=0+1%0A0+2%0A0+3%0A0+4%0A0+5&gauge=inHg',
+  '/reference/charge?ambient=999&low=x&high=-1&unit=y',
+  '/reference/leak-rate?charge=0&added=-1&days=0&year=x',
+  '/reference/vacuum?altitude=99999&ambient=-300',
   '/settings/catalogue?kind=__proto__',
   '/resources/alike?text=%00&symptoms=,,,&medium=%27&machine=%00',
   '/photos/1/medium?until=NaN&sig=x',

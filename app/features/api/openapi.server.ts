@@ -4,6 +4,7 @@ import { CASE_STATES, LINK_KEYS } from '#app/domain/chain/chain.ts';
 import { PHOTO_ROLES } from '#app/domain/photos/photo-role.ts';
 import { env } from '#app/server/env.server.ts';
 import { importLineSchema } from '../case-import/schema.ts';
+import { holdTestBody, leakRateBody } from '../reference/answers.ts';
 import { newCaseBody, newMachineBody } from './schema.ts';
 
 const error = z
@@ -190,6 +191,7 @@ export function openApiDocument() {
           },
         },
       },
+      ...referencePaths(),
       '/api/v1/machines': {
         get: {
           summary: 'List machines',
@@ -217,4 +219,42 @@ export function openApiDocument() {
       },
     },
   });
+}
+
+/** The calculators; the schemas are those that check the requests. */
+function referencePaths() {
+  const get = (summary: string, query: z.ZodObject) => ({
+    get: {
+      summary,
+      requestParams: { query },
+      responses: { '200': answer('Computed, with its source.', z.looseObject({})), ...refusals },
+    },
+  });
+  const post = (summary: string, body: z.ZodType) => ({
+    post: {
+      summary,
+      requestBody: json(body),
+      responses: { '200': answer('Computed.', z.looseObject({})), ...refusals },
+    },
+  });
+  const text = z.string();
+  return {
+    '/api/v1/reference/saturation': get(
+      'Saturation of a refrigerant at a temperature or an absolute pressure',
+      z.object({ refrigerant: text, temperatureC: z.number().optional(), pressurePa: z.number().optional() }),
+    ),
+    '/api/v1/reference/vacuum': get(
+      'The deepest vacuum possible at an altitude',
+      z.object({ altitudeM: z.number() }),
+    ),
+    '/api/v1/reference/charge-window': get(
+      'Running pressures against the air outside',
+      z.object({ refrigerant: text, ambientC: z.number() }),
+    ),
+    '/api/v1/reference/hold-test': post(
+      'What a vacuum hold shows, and the smallest leak it could have seen',
+      holdTestBody,
+    ),
+    '/api/v1/reference/leak-rate': post('Leak rate by the two methods of 40 CFR 82.152', leakRateBody),
+  };
 }

@@ -1,4 +1,6 @@
-import { NotFound } from '#app/features/outcome.ts';
+import type { z } from 'zod';
+import { fieldErrors } from '#app/features/form-fields.ts';
+import { type FieldErrors, NotFound } from '#app/features/outcome.ts';
 import { ApiError } from './api.server.ts';
 
 /** An address part that must be a whole number; anything else names nothing. */
@@ -16,4 +18,17 @@ export function limitParam(params: URLSearchParams, otherwise: number): number {
   throw new ApiError(400, 'invalid', 'Some fields are missing or wrong.', {
     limit: 'Use a whole number from 1 to 100.',
   });
+}
+
+/** The query of an address, checked; empty parts count as not given. */
+export function readQuery<T>(params: URLSearchParams, schema: z.ZodType<T>): T {
+  const parsed = schema.safeParse(Object.fromEntries([...params].filter(([, value]) => value !== '')));
+  if (parsed.success) return parsed.data;
+  throw new ApiError(400, 'invalid', 'Some fields are missing or wrong.', fieldErrors(parsed.error));
+}
+
+/** A computed answer, or its refusal as an error of the API. */
+export function answerOrRefuse<T>(answer: { ok: true; value: T } | { ok: false; fields: FieldErrors }): T {
+  if (answer.ok) return answer.value;
+  throw new ApiError(400, 'out_of_range', 'This cannot be computed.', answer.fields);
 }

@@ -21,29 +21,40 @@ export async function loader({ context }: Route.LoaderArgs) {
   };
 }
 
+const PLACES = [
+  { to: 'pressures', title: 'Pressures', text: 'Saturation of eleven refrigerants, as a plot and a table.' },
+  {
+    to: 'hold-test',
+    title: 'Hold test',
+    text: 'Tight, moisture or leak, and what the test could have seen.',
+  },
+  { to: 'charge', title: 'Charge', text: 'Running pressures against the air outside.' },
+  { to: 'leak-rate', title: 'Leak rate', text: 'From what had to be added.' },
+  { to: 'vacuum', title: 'Vacuum and altitude', text: 'How deep a gauge can go here, and when water boils.' },
+  {
+    to: 'cautions',
+    title: 'Cautions',
+    text: 'What hurts people in this work, and how not to be one of them.',
+  },
+  { to: 'glossary', title: 'Glossary', text: 'The words of the trade, and which of them mean the same.' },
+] as const;
+
 export default function Reference({ loaderData: { names, methods } }: Route.ComponentProps) {
   return (
     <div className="space-y-8">
       <PageHeader title="Reference" lead="What to have at hand beside the machine." />
-      <ul className="grid gap-3 sm:grid-cols-2">
-        <li>
-          <Link
-            to="cautions"
-            className="block rounded-xl border border-line bg-surface p-4 hover:border-action"
-          >
-            <span className="block text-lg font-semibold">Cautions</span>
-            <span className="text-muted">What hurts people in this work, and how not to be one of them.</span>
-          </Link>
-        </li>
-        <li>
-          <Link
-            to="glossary"
-            className="block rounded-xl border border-line bg-surface p-4 hover:border-action"
-          >
-            <span className="block text-lg font-semibold">Glossary</span>
-            <span className="text-muted">The words of the trade, and which of them mean the same.</span>
-          </Link>
-        </li>
+      <ul className="grid gap-3 sm:grid-cols-2 lg:grid-cols-3">
+        {PLACES.map(({ to, title, text }) => (
+          <li key={to}>
+            <Link
+              to={to}
+              className="block h-full rounded-xl border border-line bg-surface p-4 hover:border-action"
+            >
+              <span className="block text-lg font-semibold">{title}</span>
+              <span className="text-muted">{text}</span>
+            </Link>
+          </li>
+        ))}
       </ul>
       <Panel
         title="Methods"
