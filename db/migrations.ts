@@ -10,6 +10,9 @@ import { migration as m6 } from './migrations/20261201-0700-audit.ts';
 import { migration as m7 } from './migrations/20261201-0800-photos.ts';
 import { migration as m8 } from './migrations/20261201-0900-catalogue.ts';
 import { migration as m9 } from './migrations/20261201-1000-search.ts';
+import { migration as m10 } from './migrations/20261201-1100-yard-altitude.ts';
+import { migration as m11 } from './migrations/20261201-1200-hold-tests.ts';
+import { migration as m12 } from './migrations/20261201-1300-refrigerant-book.ts';
 
 /** In the order they run. A static list, so that a built server needs no folder to look into. */
 const MIGRATIONS = {
@@ -23,6 +26,9 @@ const MIGRATIONS = {
   '20261201-0800-photos': m7,
   '20261201-0900-catalogue': m8,
   '20261201-1000-search': m9,
+  '20261201-1100-yard-altitude': m10,
+  '20261201-1200-hold-tests': m11,
+  '20261201-1300-refrigerant-book': m12,
 };
 
 /** Brings the schema up to date; answers the names of the migrations it ran. MariaDB commits DDL by itself, so each is one change. */

@@ -25,6 +25,7 @@ export class Yard extends Model<InferAttributes<Yard>, InferCreationAttributes<Y
   declare id: CreationOptional<number>;
   declare shopId: number;
   declare name: CreationOptional<string>;
+  declare altitudeM: CreationOptional<number>;
 }
 
 Yard.init(
@@ -32,6 +33,7 @@ Yard.init(
     id: id(),
     shopId: ref(),
     name: word(),
+    altitudeM: whole(0),
   },
   { sequelize, tableName: 'yards' },
 );

@@ -19,9 +19,9 @@ type Props = {
   marks?: readonly Mark[];
 };
 
-const WIDTH = 640;
-const HEIGHT = 380;
-const EDGE = { left: 64, right: 16, top: 16, bottom: 52 };
+const WIDTH = 440;
+const HEIGHT = 300;
+const EDGE = { left: 56, right: 14, top: 16, bottom: 46 };
 
 const STROKES = { main: 'stroke-action', second: 'stroke-edge', dots: '' } as const;
 
@@ -55,7 +55,7 @@ export function LinePlot({
     <figure>
       <svg
         viewBox={`0 0 ${WIDTH} ${HEIGHT}`}
-        className="w-full max-w-3xl rounded-xl border border-line bg-surface"
+        className="w-full max-w-2xl rounded-xl border border-line bg-surface"
         role="img"
         aria-labelledby={`${id}-title ${id}-text`}
       >
@@ -82,26 +82,26 @@ export function LinePlot({
             strokeDasharray="5 4"
           />
         ))}
-        {y.ticks(6).map((tick) => (
+        {y.ticks(5).map((tick) => (
           <g key={tick}>
             <line x1={EDGE.left} x2={WIDTH - EDGE.right} y1={y(tick)} y2={y(tick)} className="stroke-line" />
             <text
               x={EDGE.left - 8}
               y={y(tick) + 5}
               textAnchor="end"
-              className="figures fill-muted text-[13px]"
+              className="figures fill-muted text-[12px]"
             >
               {tick.toLocaleString('en-GB')}
             </text>
           </g>
         ))}
-        {x.ticks(8).map((tick) => (
+        {x.ticks(6).map((tick) => (
           <text
             key={tick}
             x={x(tick)}
             y={HEIGHT - EDGE.bottom + 20}
             textAnchor="middle"
-            className="figures fill-muted text-[13px]"
+            className="figures fill-muted text-[12px]"
           >
             {tick.toLocaleString('en-GB')}
           </text>
@@ -110,14 +110,14 @@ export function LinePlot({
           x={(EDGE.left + WIDTH) / 2}
           y={HEIGHT - 10}
           textAnchor="middle"
-          className="fill-ink text-[14px]"
+          className="fill-ink text-[13px]"
         >
           {xLabel}
         </text>
         <text
           transform={`translate(16 ${HEIGHT / 2}) rotate(-90)`}
           textAnchor="middle"
-          className="fill-ink text-[14px]"
+          className="fill-ink text-[13px]"
         >
           {yLabel}
         </text>
@@ -140,15 +140,28 @@ export function LinePlot({
           ),
         )}
         {marks.map((mark) => (
-          <g key={mark.name}>
-            <circle cx={x(mark.x)} cy={y(mark.y)} r="7" className="fill-paper stroke-ink" strokeWidth="3" />
-            <text x={x(mark.x) + 12} y={y(mark.y) - 8} className="fill-ink text-[14px] font-semibold">
-              {mark.name}
-            </text>
-          </g>
+          <MarkedPoint key={mark.name} name={mark.name} x={x(mark.x)} y={y(mark.y)} />
         ))}
       </svg>
       <figcaption className="mt-1 text-sm text-muted">{description}</figcaption>
     </figure>
+  );
+}
+
+/** A ring with its name beside it, on the side where there is room. */
+function MarkedPoint({ name, x, y }: Mark) {
+  const left = x > WIDTH * 0.7;
+  return (
+    <g>
+      <circle cx={x} cy={y} r="6" className="fill-paper stroke-ink" strokeWidth="2.5" />
+      <text
+        x={left ? x - 11 : x + 11}
+        y={y < EDGE.top + 20 ? y + 18 : y - 8}
+        textAnchor={left ? 'end' : 'start'}
+        className="fill-ink text-[13px] font-semibold"
+      >
+        {name}
+      </text>
+    </g>
   );
 }

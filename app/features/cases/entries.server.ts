@@ -5,6 +5,7 @@ import { done, NotFound, type Outcome, refuseFields } from '#app/features/outcom
 import { Charge, Finding, Proof, Reading, RepairAction, TraceMethod } from '#db/models/index.ts';
 import { changeCase } from './change-case.server.ts';
 import { entryValues } from './entry-values.ts';
+import { gatesBeforeCharge, passGates } from './gates.server.ts';
 import { ENTRY_LINKS, type EntryInput, type EntryKind } from './schema.ts';
 
 const MODELS: Record<EntryKind, ModelStatic<Model>> = {
@@ -27,7 +28,15 @@ const TIME_COLUMN: Record<EntryKind, string> = {
 
 const NOT_NUMBERED = { byId: null, byName: '' };
 
-type Add<K extends EntryKind> = { actor: Actor; number: number; kind: K; input: EntryInput<K>; at?: Date };
+type Add<K extends EntryKind> = {
+  actor: Actor;
+  number: number;
+  kind: K;
+  input: EntryInput<K>;
+  at?: Date;
+  /** A lead's written reason to pass a gate all the same. */
+  override?: string;
+};
 
 /** Adds an entry to its link. Two people may add at once: both are kept. */
 export async function addEntry<K extends EntryKind>({
@@ -36,6 +45,7 @@ export async function addEntry<K extends EntryKind>({
   kind,
   input,
   at,
+  override = '',
 }: Add<K>): Promise<Outcome<{ id: number }>> {
   const vocabulary = await shopVocabulary(actor.shopId);
   return changeCase<{ id: number }>({
@@ -48,6 +58,10 @@ export async function addEntry<K extends EntryKind>({
     async change(row, transaction) {
       const { values, fields } = entryValues(kind, input, { medium: row.medium, vocabulary });
       if (Object.keys(fields).length > 0) return refuseFields(fields);
+      const gates =
+        kind === 'charge' ? await gatesBeforeCharge(row, input as EntryInput<'charge'>, transaction) : [];
+      const refused = await passGates({ actor, row, gates, override, at: at ?? new Date() }, transaction);
+      if (refused) return refused;
       const created = await MODELS[kind].create(
         {
           ...NOT_NUMBERED,
@@ -69,7 +83,7 @@ type ChangeEntry<K extends EntryKind> = Add<K> & { entryId: number; version: num
 
 /** Changes an entry in place; its time and author stay, the change is in the history. */
 export async function changeEntry<K extends EntryKind>(options: ChangeEntry<K>): Promise<Outcome> {
-  const { actor, number, kind, entryId, version, input } = options;
+  const { actor, number, kind, entryId, version, input, override = '' } = options;
   const vocabulary = await shopVocabulary(actor.shopId);
   return changeCase({
     actor,
@@ -84,6 +98,12 @@ export async function changeEntry<K extends EntryKind>(options: ChangeEntry<K>):
       if (Object.keys(fields).length > 0) return refuseFields(fields);
       const found = await MODELS[kind].findOne({ where: { id: entryId, caseId: row.id }, transaction });
       if (!found) throw new NotFound();
+      const gates =
+        kind === 'charge'
+          ? await gatesBeforeCharge(row, input as EntryInput<'charge'>, transaction, entryId)
+          : [];
+      const refused = await passGates({ actor, row, gates, override, at: new Date() }, transaction);
+      if (refused) return refused;
       await found.update(values, { transaction });
       return done();
     },

@@ -7,6 +7,7 @@ import { fieldErrors, formObject, typedValues } from '../form-fields.ts';
 import { type Outcome, type Refusal, refuseFields } from '../outcome.ts';
 import { saveNotes } from './commands.server.ts';
 import { addEntry, changeEntry, removeEntry } from './entries.server.ts';
+import { addHoldTest, holdTestSchema } from './hold-tests.server.ts';
 import { ENTRY_LINKS, ENTRY_SCHEMAS, type EntryKind, type NotedLink, notesSchema } from './schema.ts';
 
 export type LinkActionData = {
@@ -31,6 +32,13 @@ export async function handleLinkAction({ viewer, number, link, form }: Args) {
     const outcome = await orRefuse(saveNotes({ actor: viewer, number }, link, note, version));
     return answer(outcome, { form: 'notes', typed }, number, link, 'Notes saved.');
   }
+  if (intent === 'hold-test' && link === 'proof') {
+    const parsed = holdTestSchema.safeParse(formObject(form));
+    const outcome = parsed.success
+      ? await orRefuse(addHoldTest({ actor: viewer, number, input: parsed.data, override: overrideOf(form) }))
+      : refuseFields(fieldErrors(parsed.error));
+    return answer(outcome, { form: 'hold-test', typed }, number, link, 'Hold test recorded.');
+  }
   const kind = String(form.get('kind') ?? '');
   if (!isKindOf(kind, link)) throw data(null, { status: 400 });
   const entryId = Number(form.get('entryId') ?? 0);
@@ -53,14 +61,33 @@ export async function handleLinkAction({ viewer, number, link, form }: Args) {
   const version = Number(form.get('version')) || undefined;
   const outcome =
     intent === 'add'
-      ? await orRefuse(addEntry({ actor: viewer, number, kind, input: parsed.data }))
-      : await orRefuse(changeEntry({ actor: viewer, number, kind, input: parsed.data, entryId, version }));
+      ? await orRefuse(
+          addEntry({ actor: viewer, number, kind, input: parsed.data, override: overrideOf(form) }),
+        )
+      : await orRefuse(
+          changeEntry({
+            actor: viewer,
+            number,
+            kind,
+            input: parsed.data,
+            entryId,
+            version,
+            override: overrideOf(form),
+          }),
+        );
   return answer(outcome, { form: formName, typed }, number, link, intent === 'add' ? 'Added.' : 'Changed.');
+}
+
+/** A lead's written reason to pass a gate. */
+function overrideOf(form: FormData): string {
+  return String(form.get('override') ?? '')
+    .trim()
+    .slice(0, 5000);
 }
 
 /** The entry's own fields; the form calls a reading's kind `readingKind` and a charge's `chargeKind`, since `kind` says what the entry is. */
 function entryForm(form: FormData): Record<string, unknown> {
-  const { kind: _kind, readingKind, chargeKind, ...fields } = formObject(form);
+  const { kind: _kind, override: _override, readingKind, chargeKind, ...fields } = formObject(form);
   const own = readingKind ?? chargeKind;
   return own === undefined ? fields : { ...fields, kind: own };
 }

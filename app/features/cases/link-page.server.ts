@@ -1,13 +1,16 @@
 import type { RouterContextProvider } from 'react-router';
 import { may } from '#app/domain/permissions/matrix.ts';
+import { preferredUnits } from '#app/domain/units/preferences.ts';
 import { cautionsFor, usualProofs } from '#app/domain/vocabulary/vocabulary.ts';
 import { listCasePhotos } from '#app/features/photos/queries.server.ts';
 import { readForm } from '#app/server/forms.server.ts';
 import { orRefuse, requireActor, wholeParam } from '#app/server/guards.server.ts';
 import { requireOnCase } from './change-case.server.ts';
 import { linkChoices } from './choices.ts';
+import { listHoldTests } from './hold-tests.server.ts';
 import { handleLinkAction } from './link-action.server.ts';
 import { loadLinks } from './link-views.server.ts';
+import { readingsSpeak } from './readings-speak.server.ts';
 import type { NotedLink } from './schema.ts';
 
 type Args = { request: Request; context: Readonly<RouterContextProvider>; params: { number: string } };
@@ -16,7 +19,8 @@ type Args = { request: Request; context: Readonly<RouterContextProvider>; params
 export async function linkLoader({ context, params }: Args, link: NotedLink) {
   const viewer = requireActor(context);
   const number = wholeParam(params.number);
-  const { row, vocabulary, view } = await orRefuse(loadLinks(viewer, number));
+  const { row, evidence, vocabulary, view } = await orRefuse(loadLinks(viewer, number));
+  const spoken = await readingsSpeak(row, evidence);
   const photos = await listCasePhotos(viewer, number);
   return {
     number,
@@ -28,6 +32,15 @@ export async function linkLoader({ context, params }: Args, link: NotedLink) {
     photos: { ...photos, photos: photos.photos.filter((photo) => photo.link === link) },
     cautions: link === 'readings' ? [] : cautionsFor(link, row.medium),
     usualProofs: link === 'proof' ? usualProofs(row.medium) : [],
+    spoken,
+    pressureUnit: preferredUnits(viewer.preferences).pressure,
+    mayOverride: may(viewer.role, 'gate:override'),
+    holdTests: link === 'proof' ? await listHoldTests(row) : [],
+    remainderUnknown:
+      link === 'charge' &&
+      row.medium === 'refrigerant' &&
+      !evidence.charges.some(({ kind }) => kind === 'recovered') &&
+      !(spoken.standing && 'verdict' in spoken.standing && spoken.standing.verdict === 'empty'),
     backToWorkAt: row.backToWorkAt?.toISOString() ?? null,
   };
 }

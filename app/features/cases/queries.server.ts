@@ -271,5 +271,5 @@ export async function listMachineChoices(actor: Actor, where: WhereOptions<Machi
 
 export async function listYards(actor: Actor) {
   const yards = await Yard.findAll({ where: { shopId: actor.shopId }, order: [['name', 'ASC']] });
-  return yards.map(({ id, name }) => ({ id, name }));
+  return yards.map(({ id, name, altitudeM }) => ({ id, name, altitudeM }));
 }

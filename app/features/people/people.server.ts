@@ -165,12 +165,19 @@ async function isLastAdmin(user: User, transaction: Transaction): Promise<boolea
   return admins.every(({ id }) => id === user.id);
 }
 
-export async function addYard(actor: Actor, name: string): Promise<Outcome> {
+/** Adds a yard, or sets the altitude of the one that has this name. */
+export async function saveYard(
+  actor: Actor,
+  { name, altitude }: { name: string; altitude: number },
+): Promise<Outcome> {
   requireAdmin(actor);
   return transact(async (transaction) => {
-    const [, created] = await Yard.findOrCreate({ where: { shopId: actor.shopId, name }, transaction });
-    if (!created) return refuseFields({ name: 'There is a yard of this name.' });
-    await recordAudit({ actor, action: 'yard-added', subject: 'yard', detail: { name } }, transaction);
+    const [yard] = await Yard.findOrCreate({ where: { shopId: actor.shopId, name }, transaction });
+    await yard.update({ altitudeM: altitude }, { transaction });
+    await recordAudit(
+      { actor, action: 'yard-saved', subject: 'yard', subjectId: yard.id, detail: { name, altitude } },
+      transaction,
+    );
     return done();
   });
 }

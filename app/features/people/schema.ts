@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { ROLES } from '#app/domain/permissions/actor.ts';
+import { parseTypedNumber } from '#app/domain/units/units.ts';
 import { emailField } from '#app/features/auth/schema.ts';
 
 const nameField = z
@@ -17,4 +18,11 @@ export const yardSchema = z.object({
     .trim()
     .min(1, 'Write the yard’s name.')
     .max(100, 'Use at most 100 characters.'),
+  altitude: z
+    .string()
+    .trim()
+    .default('')
+    .transform((typed) => (typed === '' ? 0 : parseTypedNumber(typed)))
+    .refine((metres) => metres !== null && metres >= -500 && metres <= 6000, 'Use −500 to 6,000 m.')
+    .transform((metres) => Math.round(metres ?? 0)),
 });

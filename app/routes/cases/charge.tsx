@@ -16,7 +16,12 @@ export const action = (args: Route.ActionArgs) => linkAction(args, 'charge');
 export default function Charge({ loaderData, actionData }: Route.ComponentProps) {
   const { links, choices, mayEdit, photos, number, cautions } = loaderData;
   const editing = editedEntry(useSearchParams()[0], 'charge');
-  const shared = { choices, version: links.versions.charge ?? 1, actionData };
+  const shared = {
+    choices,
+    version: links.versions.charge ?? 1,
+    actionData,
+    mayOverride: loaderData.mayOverride,
+  };
   return (
     <LinkFrame lacks={loaderData.lacks}>
       <Cautions cautions={cautions} />
@@ -36,6 +41,14 @@ export default function Charge({ loaderData, actionData }: Route.ComponentProps)
           <p>
             The newest proof is missing, older than the newest repair, or not tight. Prove the circuit tight
             before any fluid goes back.
+          </p>
+        </Notice>
+      )}
+      {loaderData.remainderUnknown && (
+        <Notice tone="warn" title="The remainder is unknown">
+          <p>
+            Nothing on record says what is still inside. Recover and weigh it first, so that what goes in can
+            be charged by weight.
           </p>
         </Notice>
       )}

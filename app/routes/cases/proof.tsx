@@ -3,17 +3,19 @@ import { PhotoSection } from '#app/components/photos/photo-section.tsx';
 import { Cautions } from '#app/components/ui/notice.tsx';
 import { Panel } from '#app/components/ui/panel.tsx';
 import { AddEntry, EntryList } from '#app/features/cases/components/entries.tsx';
+import { HoldTestForm } from '#app/features/cases/components/hold-test-form.tsx';
 import { LinkFrame } from '#app/features/cases/components/link-frame.tsx';
 import { NotesForm } from '#app/features/cases/components/notes-form.tsx';
 import { editedEntry } from '#app/features/cases/edited-entry.ts';
 import { linkAction, linkLoader } from '#app/features/cases/link-page.server.ts';
+import { HoldResult } from '#app/features/reference/components/hold-result.tsx';
 import type { Route } from './+types/proof.ts';
 
 export const loader = (args: Route.LoaderArgs) => linkLoader(args, 'proof');
 export const action = (args: Route.ActionArgs) => linkAction(args, 'proof');
 
 export default function Proof({ loaderData, actionData }: Route.ComponentProps) {
-  const { links, choices, mayEdit, photos, number, cautions } = loaderData;
+  const { links, choices, mayEdit, photos, number, cautions, medium, holdTests, spoken } = loaderData;
   const editing = editedEntry(useSearchParams()[0], 'proof');
   const shared = { choices, version: links.versions.proof ?? 1, actionData };
   return (
@@ -50,6 +52,33 @@ export default function Proof({ loaderData, actionData }: Route.ComponentProps) 
           />
         )}
       </Panel>
+      {medium === 'refrigerant' && (
+        <Panel
+          title="Vacuum holds"
+          lead="By their readings, with the smallest leak that each could have seen."
+        >
+          {holdTests.length === 0 && <p className="text-muted">None yet.</p>}
+          <ul className="space-y-8">
+            {holdTests.map(({ id, ...shown }) => (
+              <li key={id}>
+                <HoldResult {...shown} />
+              </li>
+            ))}
+          </ul>
+          {mayEdit && (
+            <HoldTestForm
+              actionData={actionData}
+              count={holdTests.length}
+              mayOverride={loaderData.mayOverride}
+              start={{
+                ambient: spoken.ambientC === null ? '' : spoken.ambientC.toFixed(0),
+                altitude: String(spoken.altitudeM),
+                litres: '3',
+              }}
+            />
+          )}
+        </Panel>
+      )}
       <Panel title="In words">
         <NotesForm
           label="Notes on the proof"

@@ -4,6 +4,7 @@ import { Panel } from '#app/components/ui/panel.tsx';
 import { AddEntry, EntryList } from '#app/features/cases/components/entries.tsx';
 import { LinkFrame } from '#app/features/cases/components/link-frame.tsx';
 import { NotesForm } from '#app/features/cases/components/notes-form.tsx';
+import { SpokenReadings } from '#app/features/cases/components/spoken-readings.tsx';
 import { editedEntry } from '#app/features/cases/edited-entry.ts';
 import { linkAction, linkLoader } from '#app/features/cases/link-page.server.ts';
 import type { Route } from './+types/readings.ts';
@@ -39,6 +40,7 @@ export default function Readings({ loaderData, actionData }: Route.ComponentProp
           />
         )}
       </Panel>
+      <SpokenReadings spoken={loaderData.spoken} unit={loaderData.pressureUnit} />
       <Panel title="In words">
         <NotesForm
           label="Notes on the readings"

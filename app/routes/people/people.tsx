@@ -11,7 +11,7 @@ import { RefusalNotice } from '#app/features/cases/components/refusal-notice.tsx
 import { listYards } from '#app/features/cases/queries.server.ts';
 import { fieldErrors, formObject, typedValues } from '#app/features/form-fields.ts';
 import { refuseFields } from '#app/features/outcome.ts';
-import { addPerson, addYard, listPeople } from '#app/features/people/people.server.ts';
+import { addPerson, listPeople, saveYard } from '#app/features/people/people.server.ts';
 import { addPersonSchema, yardSchema } from '#app/features/people/schema.ts';
 import { readForm } from '#app/server/forms.server.ts';
 import { orRefuse, requirePermission } from '#app/server/guards.server.ts';
@@ -32,9 +32,9 @@ export async function action({ request, context }: Route.ActionArgs) {
   if (intent === 'add-yard') {
     const parsed = yardSchema.safeParse(formObject(form));
     const outcome = parsed.success
-      ? await orRefuse(addYard(viewer, parsed.data.name))
+      ? await orRefuse(saveYard(viewer, parsed.data))
       : refuseFields(fieldErrors(parsed.error));
-    if (outcome.ok) return redirectWithToast('/people', 'Yard added.');
+    if (outcome.ok) return redirectWithToast('/people', 'Yard saved.');
     return data({ intent, refusal: outcome, typed: typedValues(form) }, { status: 400 });
   }
   if (intent !== 'add') throw data(null, { status: 400 });
@@ -134,17 +134,34 @@ export default function People({ loaderData: { people, yards }, actionData }: Ro
         </Form>
       </Panel>
       <Panel title="Yards">
-        <p>{yards.length > 0 ? yards.map(({ name }) => name).join(', ') : 'No yard yet.'}</p>
-        <Form method="post" className="mt-4 flex max-w-md items-end gap-2" key={yards.length} noValidate>
+        <p>
+          {yards.length > 0
+            ? yards.map(({ name, altitudeM }) => `${name} (${altitudeM} m)`).join(', ')
+            : 'No yard yet.'}
+        </p>
+        <Form
+          method="post"
+          className="mt-4 flex max-w-2xl flex-wrap items-end gap-3"
+          key={yards.length}
+          noValidate
+        >
           <div className="flex-1">
             <TextField
               name="name"
-              label="Add a yard"
+              label="Add a yard, or name one to set its altitude"
               error={yardRefusal?.refused === 'fields' ? yardRefusal.fields.name : undefined}
             />
           </div>
+          <div className="w-32">
+            <TextField
+              name="altitude"
+              label="Altitude in m"
+              inputMode="numeric"
+              error={yardRefusal?.refused === 'fields' ? yardRefusal.fields.altitude : undefined}
+            />
+          </div>
           <Button name="intent" value="add-yard" variant="secondary" pending={intent === 'add-yard'}>
-            Add
+            Save
           </Button>
         </Form>
       </Panel>

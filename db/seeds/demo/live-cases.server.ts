@@ -8,6 +8,7 @@ import {
   saySameOnMine,
 } from '#app/features/cases/commands.server.ts';
 import { addEntry } from '#app/features/cases/entries.server.ts';
+import { addHoldTest } from '#app/features/cases/hold-tests.server.ts';
 import { openCase } from '#app/features/cases/open-case.server.ts';
 import type { EntryInput, EntryKind, OpenCaseInput } from '#app/features/cases/schema.ts';
 import { openCaseSchema } from '#app/features/cases/schema.ts';
@@ -261,15 +262,23 @@ export async function seedLiveCases(crew: Crew, now: Date): Promise<PlacedPhoto[
     because: 'failed',
     note: 'Both rings, oiled, bore dressed.',
   });
-  await add(rhedyn, running, 246, 'proof', {
-    method: 'Vacuum hold after 12 bar of dry nitrogen',
-    verdict: 'tight',
-    minutes: '40',
-    start: '29.4',
-    end: '29.4',
-    unit: 'inHg',
-    note: 'Nitrogen stood 30 minutes first, no fall, 14 °C at both ends.',
-  });
+  accepted(
+    await addHoldTest({
+      actor: rhedyn,
+      number: running,
+      input: {
+        samples: '0 372\n2 379\n4 384\n6 389\n8 391\n10 394\n15 398\n20 401\n25 402\n30 403\n40 404',
+        gauge: 'micron',
+        step: 1,
+        litres: 3,
+        ambient: 14,
+        altitude: 310,
+        note: 'After 12 bar of dry nitrogen for 30 minutes, no fall, 14 °C at both ends.',
+      },
+      override: '',
+      at: hoursAgo(246),
+    }),
+  );
   place(rhedyn, running, 'proof', 246, [GAUGES.vacuum]);
   await add(rhedyn, running, 245, 'charge', {
     kind: 'recovered',

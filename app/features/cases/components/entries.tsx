@@ -8,6 +8,7 @@ import type { LinkActionData } from '../link-action.server.ts';
 import type { EntryView } from '../link-views.server.ts';
 import type { EntryKind } from '../schema.ts';
 import { EntryFields } from './entry-fields.tsx';
+import { OverrideField } from './override-field.tsx';
 import { RefusalNotice } from './refusal-notice.tsx';
 
 type Shared = {
@@ -15,6 +16,7 @@ type Shared = {
   choices: LinkChoices;
   version: number;
   actionData: LinkActionData | undefined;
+  mayOverride?: boolean;
 };
 
 type ListProps = Shared & { entries: EntryView[]; editing: number | null; mayEdit: boolean; empty: string };
@@ -72,7 +74,14 @@ function ShownEntry({ entry, mayEdit }: { entry: EntryView; mayEdit: boolean }) 
   );
 }
 
-function ChangeEntry({ entry, kind, choices, version, actionData }: Shared & { entry: EntryView }) {
+function ChangeEntry({
+  mayOverride = false,
+  entry,
+  kind,
+  choices,
+  version,
+  actionData,
+}: Shared & { entry: EntryView }) {
   const mine = actionData?.form === `change-${entry.id}` ? actionData : undefined;
   const errors = mine?.refusal.refused === 'fields' ? mine.refusal.fields : {};
   const pending = usePendingIntent();
@@ -82,6 +91,7 @@ function ChangeEntry({ entry, kind, choices, version, actionData }: Shared & { e
       <input type="hidden" name="entryId" value={entry.id} />
       <input type="hidden" name="version" value={versionToSend(mine?.refusal, version)} />
       <RefusalNotice refusal={mine?.refusal} />
+      <OverrideField refusal={mine?.refusal} mayOverride={mayOverride} />
       <EntryFields kind={kind} choices={choices} values={mine?.typed ?? entry.values} errors={errors} />
       <div className="flex flex-wrap gap-2">
         <Button name="intent" value="change" pending={pending === 'change'}>
@@ -102,6 +112,7 @@ type AddProps = Shared & { title: string; start?: Record<string, string>; open?:
 
 /** The form for one more entry; it empties itself once the entry is added. */
 export function AddEntry({
+  mayOverride = false,
   kind,
   choices,
   version,
@@ -125,6 +136,7 @@ export function AddEntry({
         <input type="hidden" name="kind" value={kind} />
         <input type="hidden" name="version" value={version} />
         <RefusalNotice refusal={mine?.refusal} />
+        <OverrideField refusal={mine?.refusal} mayOverride={mayOverride} />
         <EntryFields kind={kind} choices={choices} values={mine?.typed ?? start} errors={errors} />
         <Button name="intent" value="add" pending={pending === 'add'}>
           Add

@@ -1,0 +1,175 @@
+import { beforeEach, describe, expect, test } from 'vitest';
+import { addEntry, changeEntry } from '#app/features/cases/entries.server.ts';
+import { addHoldTest, type HoldTestInput, listHoldTests } from '#app/features/cases/hold-tests.server.ts';
+import { loadLinks } from '#app/features/cases/link-views.server.ts';
+import { loadCaseHead } from '#app/features/cases/queries.server.ts';
+import { readingsSpeak } from '#app/features/cases/readings-speak.server.ts';
+import { Forbidden } from '#app/features/outcome.ts';
+import { Case, Circuit, GateOverride, Yard } from '#db/models/index.ts';
+import { openTestCase } from '#tests/setup/forms.ts';
+import { type MadeShop, makeMachine, makeShop } from '#tests/setup/people.ts';
+
+let shop: MadeShop;
+let number: number;
+
+beforeEach(async () => {
+  shop = await makeShop();
+  const { machine, circuit } = await makeMachine(shop.shop.id);
+  await circuit.update({
+    refrigerant: 'R-134a',
+    plateCharge: '1150',
+    plateChargeUnit: 'g',
+    plateChargeGrams: 1150,
+  });
+  const yard = await Yard.create({ shopId: shop.shop.id, name: 'Hill', altitudeM: 1500 });
+  await machine.update({ yardId: yard.id });
+  number = await openTestCase(shop.tech);
+});
+
+const charge = (kind: 'charged' | 'recovered', value: string, override = '', actor = shop.tech) =>
+  addEntry({
+    actor,
+    number,
+    kind: 'charge',
+    input: { kind, value, unit: 'g', substance: 'R-134a', source: '', note: '' },
+    override,
+  });
+const reading = (kind: string, value: string, unit: string) =>
+  addEntry({ actor: shop.tech, number, kind: 'reading', input: { kind, value, unit, note: '' } });
+const prove = (verdict: 'tight' | 'not-tight') =>
+  addEntry({
+    actor: shop.tech,
+    number,
+    kind: 'proof',
+    input: { method: 'Hold', verdict, minutes: '30', start: '', end: '', unit: '', note: '' },
+  });
+
+const FLAT: HoldTestInput = {
+  samples: Array.from({ length: 16 }, (_, minute) => `${minute} ${300 + (minute % 2)}`).join('\n'),
+  gauge: 'micron',
+  step: 1,
+  litres: 3,
+  ambient: 20,
+  altitude: 0,
+  note: '',
+};
+const hold = (input: Partial<HoldTestInput> = {}, override = '', actor = shop.tech) =>
+  addHoldTest({ actor, number, input: { ...FLAT, ...input }, override });
+
+describe('charging', () => {
+  test('is refused before the circuit is proved tight, and says why', async () => {
+    expect(await charge('charged', '800')).toMatchObject({
+      ok: false,
+      refused: 'gate',
+      gate: 'charge-unproved',
+      lacks: ['there is no proof'],
+    });
+    await prove('not-tight');
+    expect(await charge('charged', '800')).toMatchObject({ lacks: ['the newest proof does not say tight'] });
+    await prove('tight');
+    expect((await charge('charged', '800')).ok).toBe(true);
+  });
+
+  test('taking out is never refused', async () => {
+    expect((await charge('recovered', '300')).ok).toBe(true);
+  });
+
+  test('past the plate is refused, what went in before counted, until it is taken out', async () => {
+    await prove('tight');
+    expect((await charge('charged', '800')).ok).toBe(true);
+    expect(await charge('charged', '500')).toMatchObject({ refused: 'gate', gate: 'charge-past-plate' });
+    expect((await charge('recovered', '800')).ok).toBe(true);
+    expect((await charge('charged', '1150')).ok).toBe(true);
+  });
+
+  test('cannot be smuggled in by changing an entry', async () => {
+    const added = await charge('recovered', '300');
+    const entryId = added.ok ? added.value.id : 0;
+    const input = { kind: 'charged' as const, value: '300', unit: 'g', substance: '', source: '', note: '' };
+    expect(
+      await changeEntry({ actor: shop.tech, number, kind: 'charge', entryId, version: undefined, input }),
+    ).toMatchObject({ refused: 'gate' });
+  });
+
+  test('a lead overrides with a reason that stays visible; a tech cannot', async () => {
+    await expect(charge('charged', '800', 'in a hurry')).rejects.toThrow(Forbidden);
+    expect((await charge('charged', '800', 'Harvest, customer told, back on Friday.', shop.lead)).ok).toBe(
+      true,
+    );
+    expect(await GateOverride.findAll()).toMatchObject([
+      { gate: 'charge-unproved', reason: 'Harvest, customer told, back on Friday.', byName: shop.lead.name },
+    ]);
+    const { view } = await loadLinks(shop.tech, number);
+    expect(view.overrides).toHaveLength(1);
+  });
+});
+
+describe('a vacuum hold', () => {
+  test('is refused while the standing pressure says refrigerant is inside and none was taken out', async () => {
+    await reading('standing-pressure', '70', 'psi');
+    await reading('ambient-temperature', '21', 'C');
+    expect(await hold()).toMatchObject({ refused: 'gate', gate: 'evacuate-unrecovered' });
+    await expect(hold({}, 'just do it')).rejects.toThrow(Forbidden);
+    await charge('recovered', '600');
+    expect((await hold()).ok).toBe(true);
+  });
+
+  test('of an empty circuit goes on, and its verdict becomes the proof', async () => {
+    await reading('standing-pressure', '0', 'psi');
+    await reading('ambient-temperature', '21', 'C');
+    expect((await hold()).ok).toBe(true);
+    expect((await loadCaseHead(shop.tech, number)).state).toBe('proved-tight');
+    const row = await Case.findOne({ where: { shopId: shop.shop.id, number }, rejectOnEmpty: true });
+    expect(await listHoldTests(row)).toMatchObject([
+      { analysis: { verdict: 'tight' }, gauge: 'micron', refrigerant: 'R-134a' },
+    ]);
+  });
+
+  test('that rises is no proof', async () => {
+    await hold({
+      samples: Array.from({ length: 16 }, (_, minute) => `${minute} ${300 + 40 * minute}`).join('\n'),
+    });
+    expect((await loadLinks(shop.tech, number)).view.proofs).toMatchObject([
+      { values: { verdict: 'not-tight' } },
+    ]);
+    expect(await charge('charged', '800')).toMatchObject({ gate: 'charge-unproved' });
+  });
+
+  test.each([
+    ['0 300\n1 x', 'Line 2'],
+    ['0 300\n1 301', 'at least 5'],
+    ['-1 300\n1 2\n2 3\n3 4\n4 5', 'Line 1'],
+    ['0 99999999', 'cannot read that'],
+  ])('with readings like %j is refused in words', async (samples, words) => {
+    const outcome = await hold({ samples });
+    expect(outcome.ok === false && outcome.refused === 'fields' && outcome.fields.samples).toContain(words);
+  });
+});
+
+describe('readings speak', () => {
+  test('at the altitude of the yard', async () => {
+    await reading('standing-pressure', '73.5', 'psi');
+    await reading('ambient-temperature', '70', 'F');
+    await reading('low-side-pressure', '5', 'psi');
+    await reading('high-side-pressure', '300', 'psi');
+    await reading('suction-line-temperature', '2', 'C');
+    await reading('vent-temperature', '9', 'C');
+    const { row, evidence } = await loadLinks(shop.tech, number);
+    const spoken = await readingsSpeak(row, evidence);
+    expect(spoken).toMatchObject({ refrigerant: 'R-134a', altitudeM: 1500, standing: { verdict: 'liquid' } });
+    expect(spoken.running?.reading).toMatchObject({ low: 'low', high: 'high' });
+    expect(spoken.superheatK).toBeGreaterThan(10);
+    expect(spoken.ventBelowAmbientK).toBeCloseTo(12.1, 1);
+  });
+
+  test('an unknown refrigerant says nothing', async () => {
+    await Circuit.update({ refrigerant: 'mystery gas' }, { where: { shopId: shop.shop.id } });
+    await reading('standing-pressure', '70', 'psi');
+    const { row, evidence } = await loadLinks(shop.tech, number);
+    expect(await readingsSpeak(row, evidence)).toMatchObject({
+      refrigerant: null,
+      standing: null,
+      running: null,
+    });
+  });
+});
