@@ -47,6 +47,8 @@ export default [
       route(':id/circuits/new', 'routes/machines/new-circuit.tsx'),
       route(':id/circuits/:circuitId', 'routes/machines/circuit.tsx'),
     ]),
+    route('refrigerant', 'routes/refrigerant/book.tsx'),
+    route('refrigerant/record', 'routes/refrigerant/record.tsx'),
     ...prefix('reference', [
       index('routes/reference/reference.tsx'),
       route('pressures', 'routes/reference/pressures.tsx'),
@@ -63,6 +65,7 @@ export default [
     route('settings/catalogue', 'routes/settings/catalogue.tsx'),
   ]),
 
+  route('refrigerant/export.csv', 'routes/refrigerant/export.ts'),
   ...prefix('resources', [
     route('photos/upload', 'routes/resources/photos-upload.ts'),
     route('photos/:id', 'routes/resources/photo.ts'),

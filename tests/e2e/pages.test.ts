@@ -42,6 +42,8 @@ const SHOP_PAGES: [string, string[]][] = [
       '/machines',
       '/machines/new',
       '/write-ups',
+      '/refrigerant',
+      '/refrigerant/record',
       '/reference',
       '/reference/pressures?refrigerant=R-407C',
       '/reference/hold-test',

@@ -54,6 +54,9 @@ const PAGES: [string, Action, boolean][] = [
   ['/machines/:machine/edit', 'machine:edit', true],
   ['/machines/:machine/circuits/new', 'machine:edit', true],
   ['/machines/:machine/circuits/:circuit', 'machine:edit', true],
+  ['/refrigerant', 'shop:read', false],
+  ['/refrigerant/record?from=2026-01-01', 'shop:read', false],
+  ['/refrigerant/export.csv', 'shop:read', false],
   ['/reference', 'shop:read', false],
   ['/reference/pressures?refrigerant=R-407C&temperature=10', 'shop:read', false],
   ['/reference/hold-test', 'shop:read', false],
@@ -99,6 +102,7 @@ const WRITES: [string, Record<string, string>, Action, boolean][] = [
   ['/people', { intent: 'add', name: '' }, 'people:manage', false],
   ['/people/:person', { intent: 'change', name: '' }, 'people:manage', true],
   ['/settings/catalogue', { intent: 'add', kind: 'component', name: '' }, 'catalogue:manage', false],
+  ['/refrigerant', { intent: 'cylinder', label: '' }, 'book:write', false],
   ['/resources/preview', { body: 'x' }, 'write-up:write', false],
 ];
 

@@ -37,6 +37,7 @@ const ADDRESSES: [string, 'lead' | 'admin'][] = [
   ['/machines/:machine/circuits/new', 'lead'],
   ['/machines/:machine/circuits/:circuit', 'lead'],
   ['/settings', 'lead'],
+  ['/refrigerant', 'lead'],
   ['/resources/preview', 'lead'],
   ['/resources/photos/upload', 'lead'],
   ['/resources/photos/1', 'lead'],
@@ -100,6 +101,10 @@ const FIELDS = [
   'year',
 ];
 const INTENTS = [
+  'hold-test',
+  'cylinder',
+  'movement',
+  'reverse',
   'add',
   'change',
   'remove',
@@ -183,6 +188,8 @@ test.each([
   '/reference/charge?ambient=999&low=x&high=-1&unit=y',
   '/reference/leak-rate?charge=0&added=-1&days=0&year=x',
   '/reference/vacuum?altitude=99999&ambient=-300',
+  '/refrigerant?from=x&to=2026-99-99&machine=%00&person=-1&page=0&reverse=x',
+  '/refrigerant/export.csv?from=%27&machine=%27',
   '/settings/catalogue?kind=__proto__',
   '/resources/alike?text=%00&symptoms=,,,&medium=%27&machine=%00',
   '/photos/1/medium?until=NaN&sig=x',

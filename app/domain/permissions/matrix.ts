@@ -18,6 +18,8 @@ const MATRIX = {
   'photo:original': ['lead', 'admin'],
   'machine:edit': ['tech', 'lead', 'office', 'admin'],
   'machine:import': ['lead', 'office', 'admin'],
+  'book:write': ['tech', 'lead', 'office'],
+  'book:reverse': ['lead', 'office'],
   'write-up:write': ['tech', 'lead'],
   'write-up:review': ['lead'],
   'write-up:flag': ['tech', 'lead', 'office', 'admin'],

@@ -1,0 +1,179 @@
+import { beforeEach, describe, expect, test } from 'vitest';
+import type { Actor } from '#app/domain/permissions/actor.ts';
+import type { MovementKind } from '#app/domain/refrigerant-book/book.ts';
+import { Forbidden, NotFound } from '#app/features/outcome.ts';
+import { addCylinder, addMovement, reverseMovement } from '#app/features/refrigerant-book/commands.server.ts';
+import {
+  exportBook,
+  listMovements,
+  loadMachineBalances,
+  loadStock,
+} from '#app/features/refrigerant-book/queries.server.ts';
+import { movementSchema, parseBook } from '#app/features/refrigerant-book/schema.ts';
+import { Movement } from '#db/models/index.ts';
+import { openTestCase } from '#tests/setup/forms.ts';
+import { type MadeShop, makeMachine, makeShop } from '#tests/setup/people.ts';
+
+let shop: MadeShop;
+let cylinder: number;
+const now = new Date();
+const ALL = parseBook(new URLSearchParams());
+
+beforeEach(async () => {
+  shop = await makeShop();
+  await makeMachine(shop.shop.id, 'W01');
+  const made = await addCylinder(shop.office, { label: 'C5', refrigerant: 'R-134a', kind: 'new' }, now);
+  cylinder = made.ok ? made.value.id : 0;
+});
+
+const move = (
+  kind: MovementKind,
+  amount: string,
+  more: Record<string, string> = {},
+  actor: Actor = shop.tech,
+) =>
+  addMovement(
+    actor,
+    movementSchema.parse({ kind, cylinder, amount, unit: 'g', machine: 'W01', ...more }),
+    now,
+  );
+const held = async () => (await loadStock(shop.tech)).cylinders[0]?.grams;
+
+describe('the book', () => {
+  test('keeps what came in, went out and came back, in whole grams', async () => {
+    await move('bought', '30', { unit: 'lb' });
+    expect(await held()).toBe(13_608);
+    await move('charged', '1150');
+    await move('recovered', '540');
+    expect(await held()).toBe(12_998);
+    expect(await loadMachineBalances(shop.tech, ALL)).toEqual([
+      { number: 'W01', charged: 1150, recovered: 540 },
+    ]);
+    expect((await loadStock(shop.tech)).outOfBalanceGrams).toBe(0);
+  });
+
+  test('a cylinder never gives more than it holds', async () => {
+    await move('bought', '1000');
+    expect(await move('charged', '1001')).toMatchObject({
+      ok: false,
+      fields: { amount: 'C5 holds 1,000 g only.' },
+    });
+    expect(await held()).toBe(1000);
+  });
+
+  test('twelve people drawing at once cannot overdraw it, and the book balances', async () => {
+    await move('bought', '1000');
+    const people = [shop.tech, shop.lead, shop.office];
+    const outcomes = await Promise.all(
+      Array.from({ length: 12 }, (_, place) => move('charged', '150', {}, people[place % 3])),
+    );
+    expect(outcomes.filter(({ ok }) => ok)).toHaveLength(6);
+    expect(await held()).toBe(100);
+    expect(await loadStock(shop.tech)).toMatchObject({ outOfBalanceGrams: 0, overdrawn: [] });
+  });
+
+  test('random movements and reversals at once: nothing is made, nothing vanishes', async () => {
+    await move('bought', '5000');
+    const kinds: MovementKind[] = ['bought', 'charged', 'recovered', 'returned', 'reclaimed', 'lost'];
+    await Promise.all(
+      Array.from({ length: 30 }, (_, place) =>
+        move(kinds[(place * 7) % 6] ?? 'bought', String(100 + ((place * 37) % 900))),
+      ),
+    );
+    const rows = await Movement.findAll({ where: { shopId: shop.shop.id }, order: [['id', 'ASC']] });
+    await Promise.all(rows.slice(0, 12).map(({ id }) => reverseMovement(shop.lead, id, 'wrong', now)));
+    const stock = await loadStock(shop.tech);
+    expect(stock).toMatchObject({ outOfBalanceGrams: 0, overdrawn: [] });
+  });
+
+  test('a movement is reversed once, by lead or office, and both stay in the book', async () => {
+    await move('bought', '1000');
+    const entered = await move('charged', '400');
+    const id = entered.ok ? entered.value.id : 0;
+    await expect(reverseMovement(shop.tech, id, 'typo', now)).rejects.toThrow(Forbidden);
+    expect((await reverseMovement(shop.office, id, 'typo', now)).ok).toBe(true);
+    expect(await held()).toBe(1000);
+    const both = await Promise.all([
+      reverseMovement(shop.office, id, 'typo', now),
+      reverseMovement(shop.lead, id, 'typo', now),
+    ]);
+    expect(both.some(({ ok }) => ok)).toBe(false);
+    const { movements } = await listMovements(shop.tech, ALL);
+    expect(movements.map(({ reverses, reversed }) => [reverses, reversed])).toEqual([
+      [id, false],
+      [null, true],
+      [null, false],
+    ]);
+  });
+
+  test('what a cylinder has given away since cannot be taken back from it', async () => {
+    const bought = await move('bought', '1000');
+    await move('charged', '800');
+    expect(
+      await reverseMovement(shop.lead, bought.ok ? bought.value.id : 0, 'never came', now),
+    ).toMatchObject({ ok: false });
+  });
+
+  test.each([
+    [{ machine: 'W99' }, 'machine'],
+    [{ caseNumber: '999999' }, 'caseNumber'],
+    [{ cylinder: '999999' }, 'cylinder'],
+  ])('%j is refused beside its field', async (more, field) => {
+    await move('bought', '1000');
+    expect(await move('charged', '100', more)).toMatchObject({
+      ok: false,
+      fields: { [field]: expect.any(String) },
+    });
+  });
+
+  test('a case belongs to its machine', async () => {
+    await makeMachine(shop.shop.id, 'W02');
+    const number = await openTestCase(shop.tech, 'W02');
+    await move('bought', '1000');
+    expect(await move('charged', '100', { caseNumber: String(number) })).toMatchObject({
+      fields: { caseNumber: expect.any(String) },
+    });
+    expect((await move('charged', '100', { caseNumber: String(number), machine: 'W02' })).ok).toBe(true);
+  });
+
+  test('the export can be narrowed, and runs no formula in a spreadsheet', async () => {
+    await move('bought', '1000', { note: '=HYPERLINK("http://evil.example")' });
+    await move('charged', '100', { certificate: '+44' });
+    const csv = await exportBook(shop.office, ALL);
+    expect(csv.split('\n')[0]).toContain('id,at,kind,refrigerant,grams');
+    expect(csv).not.toMatch(/(^|,)"?=HYPERLINK/m);
+    expect((await exportBook(shop.office, { ...ALL, machine: 'W01' })).trim().split('\n')).toHaveLength(2);
+    expect((await exportBook(shop.office, { ...ALL, to: '2020-01-01' })).trim().split('\n')).toHaveLength(1);
+  });
+
+  test('another shop has its own', async () => {
+    await move('bought', '1000');
+    const far = await makeShop();
+    expect(await loadStock(far.lead)).toMatchObject({ cylinders: [] });
+    const [row] = await Movement.findAll({ where: { shopId: shop.shop.id } });
+    await expect(reverseMovement(far.lead, row?.id ?? 0, 'x', now)).rejects.toThrow(NotFound);
+    expect(await move('charged', '10', {}, far.tech)).toMatchObject({
+      ok: false,
+      fields: { cylinder: expect.any(String) },
+    });
+  });
+});
+
+test.each([
+  [{ amount: '0' }, 'amount'],
+  [{ amount: '-5' }, 'amount'],
+  [{ amount: '2000000' }, 'amount'],
+  [{ unit: 'psi' }, 'unit'],
+  [{ kind: 'stolen' }, 'kind'],
+  [{ kind: 'charged', machine: '' }, 'machine'],
+  [{ caseNumber: 'x' }, 'caseNumber'],
+])('a movement with %j is refused', (fields, name) => {
+  const parsed = movementSchema.safeParse({
+    kind: 'bought',
+    cylinder: 1,
+    amount: '10',
+    unit: 'g',
+    ...fields,
+  });
+  expect(parsed.success ? [] : parsed.error.issues.map(({ path }) => path[0])).toContain(name);
+});
