@@ -81,6 +81,8 @@ export default [
     route('cases/:number', 'routes/api/v1/case.ts'),
     route('cases/:number/alike', 'routes/api/v1/case-alike.ts'),
     route('cases/:number/photos', 'routes/api/v1/case-photos.ts'),
+    route('cases/:number/entries', 'routes/api/v1/case-entries.ts'),
+    route('cases/:number/hold-tests', 'routes/api/v1/case-hold-tests.ts'),
     route('machines', 'routes/api/v1/machines.ts'),
     route('machines/:id', 'routes/api/v1/machine.ts'),
     route('reference/saturation', 'routes/api/v1/reference/saturation.ts'),

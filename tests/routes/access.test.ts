@@ -116,6 +116,8 @@ const CALLS: [string, string, unknown, Action, boolean][] = [
   ['GET', '/api/v1/cases/:number/alike', undefined, 'shop:read', true],
   ['GET', '/api/v1/cases/:number/photos', undefined, 'shop:read', true],
   ['POST', '/api/v1/cases/:number/photos', {}, 'photo:add', true],
+  ['POST', '/api/v1/cases/:number/entries', {}, 'case:edit', true],
+  ['POST', '/api/v1/cases/:number/hold-tests', {}, 'case:edit', true],
   ['GET', '/api/v1/reference/saturation?refrigerant=R-134a&temperatureC=20', undefined, 'shop:read', false],
   ['GET', '/api/v1/reference/vacuum?altitudeM=0', undefined, 'shop:read', false],
   ['GET', '/api/v1/reference/charge-window?refrigerant=R-134a&ambientC=27', undefined, 'shop:read', false],

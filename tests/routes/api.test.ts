@@ -16,7 +16,8 @@ const call = (address: string, options: Parameters<typeof visit>[1] = {}, bearer
 
 beforeAll(async () => {
   shop = await makeShop();
-  await makeMachine(shop.shop.id, 'W91');
+  const { circuit } = await makeMachine(shop.shop.id, 'W91');
+  await circuit.update({ refrigerant: 'R-134a' });
   token = await issueApiToken(shop.lead, 'tests', new Date());
   const answer = await call('/cases/import', {
     method: 'POST',
@@ -83,6 +84,53 @@ describe('the API', () => {
     expect(alike.results.length).toBe(2);
     expect(alike.results[0].why.length).toBeGreaterThan(0);
     expect(await (await call(`/cases/${number}/photos`)).json()).toEqual({ photos: [] });
+  });
+
+  test('keeps the gates: 409 with the rule, until proved or overridden by a lead', async () => {
+    const tech = await issueApiToken(shop.tech, 'gates', new Date());
+    const opened = await call('/cases', { json: { machine: 'W91', complaint: 'Empty again' } });
+    const { number } = await opened.json();
+    const charge = (more = {}, bearer = tech) =>
+      call(
+        `/cases/${number}/entries`,
+        { json: { entry: 'charge', fields: { kind: 'charged', value: 500, unit: 'g' }, ...more } },
+        bearer,
+      );
+    const refused = await charge();
+    expect(refused.status).toBe(409);
+    expect((await refused.json()).error).toMatchObject({
+      code: 'gate',
+      message: expect.stringContaining('there is no proof'),
+    });
+    expect((await charge({ override: 'because' })).status).toBe(403);
+    expect((await charge({ override: 'Customer signed for it.' }, token)).status).toBe(201);
+    const standing = { entry: 'reading', fields: { kind: 'standing-pressure', value: '70', unit: 'psi' } };
+    expect((await call(`/cases/${number}/entries`, { json: standing })).status).toBe(201);
+    const ambient = { entry: 'reading', fields: { kind: 'ambient-temperature', value: 21, unit: 'C' } };
+    expect((await call(`/cases/${number}/entries`, { json: ambient })).status).toBe(201);
+    const samples = Array.from({ length: 12 }, (_, minute) => ({
+      minutes: minute,
+      reading: 300 + (minute % 2),
+    }));
+    const hold = (more = {}) =>
+      call(
+        `/cases/${number}/hold-tests`,
+        { json: { samples, gauge: 'micron', step: 1, litres: 3, ambient: 21, ...more } },
+        tech,
+      );
+    const evacuation = await hold();
+    expect(evacuation.status).toBe(409);
+    expect((await evacuation.json()).error.message).toContain('recovered');
+    const recovered = { entry: 'charge', fields: { kind: 'recovered', value: 500, unit: 'g' } };
+    expect((await call(`/cases/${number}/entries`, { json: recovered }, tech)).status).toBe(201);
+    const held = await hold();
+    expect(held.status).toBe(201);
+    expect((await held.json()).proof).toMatchObject({ verdict: 'tight' });
+    expect((await charge()).status).toBe(201);
+    expect((await call(`/cases/${number}/entries`, { json: { entry: 'reading', fields: {} } })).status).toBe(
+      400,
+    );
+    expect((await hold({ litres: -1 })).status).toBe(400);
   });
 
   test('takes photos in, and says which it did not keep', async () => {
@@ -180,6 +228,8 @@ describe('the API', () => {
       '/api/v1/cases/import',
       '/api/v1/cases/{number}',
       '/api/v1/cases/{number}/alike',
+      '/api/v1/cases/{number}/entries',
+      '/api/v1/cases/{number}/hold-tests',
       '/api/v1/cases/{number}/photos',
       '/api/v1/find',
       '/api/v1/machines',

@@ -48,6 +48,8 @@ const ADDRESSES: [string, 'lead' | 'admin'][] = [
   ['/api/v1/cases/import', 'lead'],
   ['/api/v1/cases/:number/photos', 'lead'],
   ['/api/v1/machines', 'lead'],
+  ['/api/v1/cases/:number/entries', 'lead'],
+  ['/api/v1/cases/:number/hold-tests', 'lead'],
   ['/api/v1/reference/hold-test', 'lead'],
   ['/api/v1/reference/leak-rate', 'lead'],
 ];

@@ -5,6 +5,7 @@ import { PHOTO_ROLES } from '#app/domain/photos/photo-role.ts';
 import { env } from '#app/server/env.server.ts';
 import { importLineSchema } from '../case-import/schema.ts';
 import { holdTestBody, leakRateBody } from '../reference/answers.ts';
+import { holdTestEntryBody, newEntryBody } from './entry-bodies.ts';
 import { newCaseBody, newMachineBody } from './schema.ts';
 
 const error = z
@@ -187,6 +188,30 @@ export function openApiDocument() {
               'What was kept and what was not.',
               z.object({ photos: z.array(photo), errors: uploadErrors }),
             ),
+            ...refusals,
+          },
+        },
+      },
+      '/api/v1/cases/{number}/entries': {
+        post: {
+          summary: 'Add a reading, method, finding, repair, proof or charge entry; gates refuse with 409',
+          requestParams: { path: number },
+          requestBody: json(newEntryBody),
+          responses: {
+            '201': answer('The new entry.', z.object({ id: z.int(), entry: z.string() })),
+            '409': answer('A gate stands against it.', error),
+            ...refusals,
+          },
+        },
+      },
+      '/api/v1/cases/{number}/hold-tests': {
+        post: {
+          summary: 'Record a vacuum hold by its readings; its verdict becomes a proof',
+          requestParams: { path: number },
+          requestBody: json(holdTestEntryBody),
+          responses: {
+            '201': answer('The proof and where the case stands.', z.looseObject({})),
+            '409': answer('A gate stands against it.', error),
             ...refusals,
           },
         },

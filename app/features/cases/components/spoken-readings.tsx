@@ -88,10 +88,15 @@ export function SpokenReadings({ spoken, unit }: { spoken: Spoken; unit: UnitId 
           facts={[
             { label: 'Superheat', value: kelvin(spoken.superheatK) },
             { label: 'Subcooling', value: kelvin(spoken.subcoolingK) },
-            { label: 'Vent below the air outside', value: kelvin(spoken.ventBelowAmbientK) },
+            { label: 'Vent against the air outside', value: ventWords(spoken.ventBelowAmbientK) },
           ]}
         />
       </div>
     </Panel>
   );
+}
+
+function ventWords(below: number | null): string {
+  if (below === null) return '';
+  return below >= 0 ? `${below.toFixed(1)} K colder` : `${(-below).toFixed(1)} K warmer`;
 }
