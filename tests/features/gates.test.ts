@@ -135,6 +135,31 @@ describe('a vacuum hold', () => {
     expect(await charge('charged', '800')).toMatchObject({ gate: 'charge-unproved' });
   });
 
+  test('cannot be given another verdict by hand', async () => {
+    await hold({
+      samples: Array.from({ length: 16 }, (_, minute) => `${minute} ${300 + 40 * minute}`).join('\n'),
+    });
+    const [proof] = (await loadLinks(shop.tech, number)).view.proofs;
+    const input = {
+      method: 'Hold',
+      verdict: 'tight' as const,
+      minutes: '15',
+      start: '',
+      end: '',
+      unit: '',
+      note: '',
+    };
+    const changed = await changeEntry({
+      actor: shop.tech,
+      number,
+      kind: 'proof',
+      entryId: proof?.id ?? 0,
+      version: undefined,
+      input,
+    });
+    expect(changed).toMatchObject({ ok: false, fields: { verdict: expect.any(String) } });
+  });
+
   test.each([
     ['0 300\n1 x', 'Line 2'],
     ['0 300\n1 301', 'at least 5'],

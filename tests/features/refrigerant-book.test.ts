@@ -6,11 +6,12 @@ import { addCylinder, addMovement, reverseMovement } from '#app/features/refrige
 import {
   exportBook,
   listMovements,
+  loadLeakEstimate,
   loadMachineBalances,
   loadStock,
 } from '#app/features/refrigerant-book/queries.server.ts';
 import { movementSchema, parseBook } from '#app/features/refrigerant-book/schema.ts';
-import { Movement } from '#db/models/index.ts';
+import { Machine, Movement } from '#db/models/index.ts';
 import { openTestCase } from '#tests/setup/forms.ts';
 import { type MadeShop, makeMachine, makeShop } from '#tests/setup/people.ts';
 
@@ -144,6 +145,29 @@ describe('the book', () => {
     expect(csv).not.toMatch(/(^|,)"?=HYPERLINK/m);
     expect((await exportBook(shop.office, { ...ALL, machine: 'W01' })).trim().split('\n')).toHaveLength(2);
     expect((await exportBook(shop.office, { ...ALL, to: '2020-01-01' })).trim().split('\n')).toHaveLength(1);
+  });
+
+  test('a machine topped up without a repair is flagged, with its rate by both methods', async () => {
+    await move('bought', '10000');
+    const at = (days: number) => new Date(now.getTime() - days * 24 * 60 * 60_000);
+    const machineId = (
+      await Machine.findOne({ where: { shopId: shop.shop.id, number: 'W01' }, rejectOnEmpty: true })
+    ).id;
+    const charge = (grams: string, days: number) =>
+      addMovement(
+        shop.tech,
+        movementSchema.parse({ kind: 'charged', cylinder, amount: grams, unit: 'g', machine: 'W01' }),
+        at(days),
+      );
+    expect(await loadLeakEstimate(shop.tech, machineId, 900, now)).toBeNull();
+    await charge('900', 240);
+    await charge('150', 120);
+    /** 150 g in 120 days of a charge of 900 g: the mobile example of tests/reference/leak-rate.json. */
+    const found = await loadLeakEstimate(shop.tech, machineId, 900, now);
+    expect(found?.gramsPerYear).toBeCloseTo(456.25, 1);
+    expect(found?.annualizing).toBeCloseTo(50.694, 2);
+    expect(found?.rolling).toBeCloseTo(16.667, 2);
+    expect(found?.toppedUp).toMatchObject([{ grams: 150 }]);
   });
 
   test('another shop has its own', async () => {

@@ -103,6 +103,7 @@ export async function loadMachine(actor: Actor, machineId: number) {
       place: nameOf(vocabulary, 'circuit', circuit.place),
       mediumName: mediumName(vocabulary, circuit.medium),
       refrigerant: circuit.refrigerant,
+      plateGrams: circuit.plateChargeGrams,
       plateCharge: circuit.plateCharge ? `${circuit.plateCharge} ${unitLabel(circuit.plateChargeUnit)}` : '',
       oil: circuit.oil,
       metering: METERING_NAMES[circuit.metering],

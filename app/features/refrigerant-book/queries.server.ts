@@ -1,5 +1,6 @@
 import { stringify } from 'csv-stringify/sync';
 import { QueryTypes } from 'sequelize';
+import { annualizingRate, gramsLostPerYear, rollingAverageRate } from '#app/domain/leak-rate/leak-rate.ts';
 import type { Actor } from '#app/domain/permissions/actor.ts';
 import { may } from '#app/domain/permissions/matrix.ts';
 import {
@@ -167,4 +168,68 @@ export async function exportBook(actor: Actor, input: BookInput): Promise<string
       ],
     },
   );
+}
+
+const DAY_MS = 24 * 60 * 60_000;
+
+export type LeakEstimate = {
+  /** Per cent a year of the plate by the two methods, from the newest addition and from the year's. */
+  annualizing: number | null;
+  rolling: number | null;
+  gramsPerYear: number | null;
+  /** Additions that no repair of the machine came before since the addition before them. */
+  toppedUp: { grams: number; at: string }[];
+};
+
+/** What a machine's additions say of its leaks; a first fill after a recovery is no addition but a refill. */
+export async function loadLeakEstimate(
+  actor: Actor,
+  machineId: number,
+  plateGrams: number | null,
+  now: Date,
+): Promise<LeakEstimate | null> {
+  const rows = await sequelize.query<{ grams: number; at: Date; kind: 'charged' | 'recovered' }>(
+    `SELECT v.grams, v.at, v.kind FROM movements v LEFT JOIN movements r ON r.reversesId = v.id
+      WHERE v.shopId = :shopId AND v.machineId = :machineId AND v.kind IN ('charged', 'recovered') AND v.reversesId IS NULL AND r.id IS NULL
+      ORDER BY v.at, v.id`,
+    { replacements: { shopId: actor.shopId, machineId }, type: QueryTypes.SELECT },
+  );
+  const repairs = await sequelize.query<{ at: Date }>(
+    'SELECT a.at FROM repair_actions a JOIN cases c ON c.id = a.caseId WHERE c.machineId = :machineId ORDER BY a.at',
+    { replacements: { machineId }, type: QueryTypes.SELECT },
+  );
+  const additions: { grams: number; at: Date; days: number | null; repaired: boolean }[] = [];
+  let recovered = 0;
+  let before: Date | null = null;
+  for (const { grams, at, kind } of rows) {
+    if (kind === 'recovered') {
+      recovered += grams;
+      continue;
+    }
+    const since = before;
+    const added = Math.max(grams - recovered, 0);
+    const repaired = repairs.some((repair) => repair.at <= at && (since === null || repair.at > since));
+    if (added > 0)
+      additions.push({
+        grams: added,
+        at,
+        days: since ? (at.getTime() - since.getTime()) / DAY_MS : null,
+        repaired,
+      });
+    recovered = 0;
+    before = at;
+  }
+  const newest = additions.at(-1);
+  if (!newest) return null;
+  const year = additions
+    .filter(({ at, days }) => days !== null && now.getTime() - at.getTime() <= 365 * DAY_MS)
+    .map(({ grams }) => grams);
+  return {
+    annualizing: plateGrams && newest.days ? annualizingRate(newest.grams, plateGrams, newest.days) : null,
+    rolling: plateGrams ? rollingAverageRate(year, plateGrams) : null,
+    gramsPerYear: newest.days ? gramsLostPerYear(newest.grams, newest.days) : null,
+    toppedUp: additions
+      .filter(({ repaired, days }) => !repaired && days !== null)
+      .map(({ grams, at }) => ({ grams, at: at.toISOString() })),
+  };
 }
