@@ -13,6 +13,7 @@ import { migration as m9 } from './migrations/20261201-1000-search.ts';
 import { migration as m10 } from './migrations/20261201-1100-yard-altitude.ts';
 import { migration as m11 } from './migrations/20261201-1200-hold-tests.ts';
 import { migration as m12 } from './migrations/20261201-1300-refrigerant-book.ts';
+import { migration as m13 } from './migrations/20261201-1400-certificates.ts';
 
 /** In the order they run. A static list, so that a built server needs no folder to look into. */
 const MIGRATIONS = {
@@ -29,6 +30,7 @@ const MIGRATIONS = {
   '20261201-1100-yard-altitude': m10,
   '20261201-1200-hold-tests': m11,
   '20261201-1300-refrigerant-book': m12,
+  '20261201-1400-certificates': m13,
 };
 
 /** Brings the schema up to date; answers the names of the migrations it ran. MariaDB commits DDL by itself, so each is one change. */

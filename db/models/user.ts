@@ -33,3 +33,17 @@ User.init(
   },
   { sequelize, tableName: 'users' },
 );
+
+/** What a person is certified for, and until when; without a date it does not expire. */
+export class Certificate extends Model<InferAttributes<Certificate>, InferCreationAttributes<Certificate>> {
+  declare id: CreationOptional<number>;
+  declare shopId: number;
+  declare userId: number;
+  declare name: string;
+  declare expiresOn: CreationOptional<Date | null>;
+}
+
+Certificate.init(
+  { id: id(), shopId: ref(), userId: ref(), name: word(), expiresOn: momentOrNull() },
+  { sequelize, tableName: 'certificates' },
+);

@@ -2,6 +2,7 @@ import { beforeEach, describe, expect, test } from 'vitest';
 import { addEntry, changeEntry } from '#app/features/cases/entries.server.ts';
 import { addHoldTest, type HoldTestInput, listHoldTests } from '#app/features/cases/hold-tests.server.ts';
 import { loadLinks } from '#app/features/cases/link-views.server.ts';
+import { addPressureTest, pressureTestSchema } from '#app/features/cases/pressure-tests.server.ts';
 import { loadCaseHead } from '#app/features/cases/queries.server.ts';
 import { readingsSpeak } from '#app/features/cases/readings-speak.server.ts';
 import { Forbidden } from '#app/features/outcome.ts';
@@ -168,6 +169,28 @@ describe('a vacuum hold', () => {
   ])('with readings like %j is refused in words', async (samples, words) => {
     const outcome = await hold({ samples });
     expect(outcome.ok === false && outcome.refused === 'fields' && outcome.fields.samples).toContain(words);
+  });
+});
+
+describe('a pressure test with dry nitrogen', () => {
+  /** The handbook's curve P10: 150 psi at 38 °C end at about 144 psi at 27 °C without a leak. */
+  test.each([
+    ['144', '27', 'tight'],
+    ['144', '38', 'not-tight'],
+    ['130', '27', 'not-tight'],
+    ['160', '27', 'cannot-tell'],
+  ])('that ends at %s psi and %s °C: %s', async (endPressure, endC, verdict) => {
+    const input = pressureTestSchema.parse({
+      startPressure: '150',
+      endPressure,
+      pressureUnit: 'psi',
+      pressureStep: '1',
+      startC: '38',
+      endC,
+      pressureMinutes: '30',
+    });
+    expect((await addPressureTest({ actor: shop.tech, number, input })).ok).toBe(true);
+    expect((await loadLinks(shop.tech, number)).view.proofs).toMatchObject([{ values: { verdict } }]);
   });
 });
 

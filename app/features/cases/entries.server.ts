@@ -2,8 +2,9 @@ import type { Model, ModelStatic } from 'sequelize';
 import type { Actor } from '#app/domain/permissions/actor.ts';
 import { shopVocabulary } from '#app/features/catalogue/queries.server.ts';
 import { done, NotFound, type Outcome, refuseFields } from '#app/features/outcome.ts';
-import { Charge, Finding, HoldTest, Proof, Reading, RepairAction, TraceMethod } from '#db/models/index.ts';
+import { Charge, Finding, Proof, Reading, RepairAction, TraceMethod } from '#db/models/index.ts';
 import { changeCase } from './change-case.server.ts';
+import { isComputedProof } from './computed-proofs.ts';
 import { entryValues } from './entry-values.ts';
 import { gatesBeforeCharge, passGates } from './gates.server.ts';
 import { ENTRY_LINKS, type EntryInput, type EntryKind } from './schema.ts';
@@ -98,12 +99,13 @@ export async function changeEntry<K extends EntryKind>(options: ChangeEntry<K>):
       if (Object.keys(fields).length > 0) return refuseFields(fields);
       const found = await MODELS[kind].findOne({ where: { id: entryId, caseId: row.id }, transaction });
       if (!found) throw new NotFound();
-      if (kind === 'proof' && found.get('verdict') !== values.verdict) {
-        const computed = await HoldTest.count({ where: { proofId: entryId }, transaction });
-        if (computed)
+      if (kind === 'proof' && isComputedProof(found.get('method'))) {
+        const { method, verdict } = values;
+        if (verdict !== found.get('verdict') || method !== found.get('method')) {
           return refuseFields({
-            verdict: 'This verdict is worked out from the readings. Record another test instead.',
+            verdict: 'This is worked out from the readings. Record another test instead.',
           });
+        }
       }
       const gates =
         kind === 'charge'

@@ -9,21 +9,13 @@ import {
 } from '#app/domain/hold-test/hold-test.ts';
 import type { Actor } from '#app/domain/permissions/actor.ts';
 import { refrigerantNamed } from '#app/domain/refrigerant/saturation.ts';
-import { parseTypedNumber } from '#app/domain/units/units.ts';
 import { done, type Outcome, refuseFields } from '#app/features/outcome.ts';
 import { HOLD_GAUGES, type HoldGauge, holdTestOf } from '#app/features/reference/hold-input.ts';
 import { type Case, Circuit, HoldTest, Proof } from '#db/models/index.ts';
 import { changeCase } from './change-case.server.ts';
+import { COMPUTED_PROOFS } from './computed-proofs.ts';
 import { gatesBeforeEvacuation, passGates } from './gates.server.ts';
-
-const number = (least: number, most: number, words: string) =>
-  z
-    .string()
-    .trim()
-    .default('')
-    .refine((typed) => parseTypedNumber(typed) !== null, 'Write this as a number, like 12.5.')
-    .transform((typed) => parseTypedNumber(typed) ?? 0)
-    .refine((value) => value >= least && value <= most, words);
+import { number } from './typed-number.ts';
 
 export const holdTestSchema = z.object({
   samples: z
@@ -81,7 +73,7 @@ export async function addHoldTest({
         {
           shopId: row.shopId,
           caseId: row.id,
-          method: 'Vacuum hold, worked out from its readings',
+          method: COMPUTED_PROOFS.vacuum,
           verdict: AS_PROOF[analysis.verdict],
           minutes: Math.max(...minutes) - Math.min(...minutes),
           note: input.note,

@@ -8,6 +8,7 @@ import { type Outcome, type Refusal, refuseFields } from '../outcome.ts';
 import { saveNotes } from './commands.server.ts';
 import { addEntry, changeEntry, removeEntry } from './entries.server.ts';
 import { addHoldTest, holdTestSchema } from './hold-tests.server.ts';
+import { addPressureTest, pressureTestSchema } from './pressure-tests.server.ts';
 import { ENTRY_LINKS, ENTRY_SCHEMAS, type EntryKind, type NotedLink, notesSchema } from './schema.ts';
 
 export type LinkActionData = {
@@ -38,6 +39,13 @@ export async function handleLinkAction({ viewer, number, link, form }: Args) {
       ? await orRefuse(addHoldTest({ actor: viewer, number, input: parsed.data, override: overrideOf(form) }))
       : refuseFields(fieldErrors(parsed.error));
     return answer(outcome, { form: 'hold-test', typed }, number, link, 'Hold test recorded.');
+  }
+  if (intent === 'pressure-test' && link === 'proof') {
+    const parsed = pressureTestSchema.safeParse(formObject(form));
+    const outcome = parsed.success
+      ? await orRefuse(addPressureTest({ actor: viewer, number, input: parsed.data }))
+      : refuseFields(fieldErrors(parsed.error));
+    return answer(outcome, { form: 'pressure-test', typed }, number, link, 'Pressure test recorded.');
   }
   const kind = String(form.get('kind') ?? '');
   if (!isKindOf(kind, link)) throw data(null, { status: 400 });

@@ -3,6 +3,7 @@ import { ChainDots } from '#app/components/chain/chain-strip.tsx';
 import { Badge, CaseStateBadge } from '#app/components/ui/badge.tsx';
 import { ButtonLink } from '#app/components/ui/button.tsx';
 import { EmptyState } from '#app/components/ui/empty-state.tsx';
+import { Notice } from '#app/components/ui/notice.tsx';
 import { PageHeader } from '#app/components/ui/page-header.tsx';
 import { Panel } from '#app/components/ui/panel.tsx';
 import { Day } from '#app/components/ui/time.tsx';
@@ -17,15 +18,18 @@ export const meta: Route.MetaFunction = () => [{ title: 'Bench · Weepmark' }];
 
 export async function loader({ context }: Route.LoaderArgs) {
   const viewer = requireActor(context);
+  const now = new Date();
+  const certificates = await listCertificates(viewer.shopId, viewer.userId, now);
   return {
-    ...(await loadBench(viewer, new Date())),
+    ...(await loadBench(viewer, now)),
+    certificates: certificates.filter(({ state }) => state !== 'good'),
     role: viewer.role,
     mayOpen: may(viewer.role, 'case:open'),
   };
 }
 
 export default function Bench({
-  loaderData: { atWork, parked, reviews, role, mayOpen },
+  loaderData: { certificates, atWork, parked, reviews, role, mayOpen },
 }: Route.ComponentProps) {
   return (
     <div className="space-y-8">
@@ -44,6 +48,17 @@ export default function Bench({
           )
         }
       />
+      {certificates.length > 0 && (
+        <Notice tone="warn" title="Your certificates">
+          <ul>
+            {certificates.map(({ id, name, state }) => (
+              <li key={id}>
+                {name} {state === 'expired' ? 'has expired' : 'expires soon'}.
+              </li>
+            ))}
+          </ul>
+        </Notice>
+      )}
       {atWork.length === 0 ? (
         <EmptyState title="The bench is clear" action={<ButtonLink to="/find">Find a past case</ButtonLink>}>
           No unfinished case here.

@@ -6,6 +6,7 @@ import { AddEntry, EntryList } from '#app/features/cases/components/entries.tsx'
 import { HoldTestForm } from '#app/features/cases/components/hold-test-form.tsx';
 import { LinkFrame } from '#app/features/cases/components/link-frame.tsx';
 import { NotesForm } from '#app/features/cases/components/notes-form.tsx';
+import { PressureTestForm } from '#app/features/cases/components/pressure-test-form.tsx';
 import { editedEntry } from '#app/features/cases/edited-entry.ts';
 import { linkAction, linkLoader } from '#app/features/cases/link-page.server.ts';
 import { HoldResult } from '#app/features/reference/components/hold-result.tsx';
@@ -66,16 +67,25 @@ export default function Proof({ loaderData, actionData }: Route.ComponentProps) 
             ))}
           </ul>
           {mayEdit && (
-            <HoldTestForm
-              actionData={actionData}
-              count={holdTests.length}
-              mayOverride={loaderData.mayOverride}
-              start={{
-                ambient: spoken.ambientC === null ? '' : spoken.ambientC.toFixed(0),
-                altitude: String(spoken.altitudeM),
-                litres: '3',
-              }}
-            />
+            <>
+              <HoldTestForm
+                key={holdTests.length}
+                number={number}
+                actionData={actionData}
+                count={holdTests.length}
+                mayOverride={loaderData.mayOverride}
+                start={{
+                  ambient: spoken.ambientC === null ? '' : spoken.ambientC.toFixed(0),
+                  altitude: String(spoken.altitudeM),
+                  litres: '3',
+                }}
+              />
+              <PressureTestForm
+                actionData={actionData}
+                count={links.proofs.length}
+                ambient={spoken.ambientC === null ? '' : spoken.ambientC.toFixed(0)}
+              />
+            </>
           )}
         </Panel>
       )}

@@ -1,13 +1,20 @@
 import { data, Form, useNavigation } from 'react-router';
 import { RadioCards, TextField } from '#app/components/forms/field.tsx';
+import { Badge } from '#app/components/ui/badge.tsx';
 import { Button } from '#app/components/ui/button.tsx';
 import { PageHeader } from '#app/components/ui/page-header.tsx';
 import { Panel } from '#app/components/ui/panel.tsx';
-import { DateTime } from '#app/components/ui/time.tsx';
+import { DateTime, Day } from '#app/components/ui/time.tsx';
 import { ROLE_NAMES, ROLES } from '#app/domain/permissions/actor.ts';
 import { RefusalNotice } from '#app/features/cases/components/refusal-notice.tsx';
 import { fieldErrors, formObject } from '#app/features/form-fields.ts';
 import { type Outcome, refuseFields } from '#app/features/outcome.ts';
+import {
+  addCertificate,
+  certificateSchema,
+  listCertificates,
+  removeCertificate,
+} from '#app/features/people/certificates.server.ts';
 import {
   changePerson,
   endPersonSessions,
@@ -27,7 +34,9 @@ export const meta: Route.MetaFunction = ({ loaderData }) => [
 
 export async function loader({ context, params }: Route.LoaderArgs) {
   const viewer = requirePermission(context, 'people:manage');
-  return { person: await orRefuse(loadPerson(viewer, wholeParam(params.id), new Date())) };
+  const now = new Date();
+  const person = await orRefuse(loadPerson(viewer, wholeParam(params.id), now));
+  return { person, certificates: await listCertificates(viewer.shopId, person.id, now) };
 }
 
 export async function action({ request, context, params }: Route.ActionArgs) {
@@ -54,6 +63,14 @@ export async function action({ request, context, params }: Route.ActionArgs) {
         return setActive(viewer, userId, true, new Date());
       case 'end-sessions':
         return endPersonSessions(viewer, userId);
+      case 'add-certificate': {
+        const parsed = certificateSchema.safeParse(formObject(form));
+        return parsed.success
+          ? addCertificate(viewer, userId, parsed.data)
+          : refuseFields(fieldErrors(parsed.error));
+      }
+      case 'remove-certificate':
+        return removeCertificate(viewer, userId, Number(form.get('certificateId')) || 0);
       case 'invite':
         return inviteAgain(viewer, userId, new Date());
       default:
@@ -67,10 +84,12 @@ const SAID: Record<string, string> = {
   deactivate: 'Deactivated. Their sessions and tokens have ended.',
   activate: 'Active again.',
   'end-sessions': 'Their sessions have ended.',
+  'add-certificate': 'Certificate added.',
+  'remove-certificate': 'Certificate removed.',
   invite: 'The link was mailed again.',
 };
 
-export default function Person({ loaderData: { person }, actionData }: Route.ComponentProps) {
+export default function Person({ loaderData: { person, certificates }, actionData }: Route.ComponentProps) {
   const intent = useNavigation().formData?.get('intent');
   const refusal = actionData?.refusal;
   const errors = refusal?.refused === 'fields' ? refusal.fields : {};
@@ -125,6 +144,50 @@ export default function Person({ loaderData: { person }, actionData }: Route.Com
               Make active again
             </Button>
           )}
+        </Form>
+      </Panel>
+      <Panel title="Certificates" lead="What they are certified for. Local law says which are needed.">
+        <ul className="divide-y divide-line">
+          {certificates.map(({ id, name, expiresOn, state }) => (
+            <li key={id} className="flex flex-wrap items-center justify-between gap-3 py-2">
+              <span>
+                {name}
+                {expiresOn && (
+                  <>
+                    , until <Day value={expiresOn} />
+                  </>
+                )}{' '}
+                {state !== 'good' && (
+                  <Badge tone={state === 'expired' ? 'danger' : 'warn'}>
+                    {state === 'expired' ? 'expired' : 'expires soon'}
+                  </Badge>
+                )}
+              </span>
+              <Form method="post">
+                <input type="hidden" name="certificateId" value={id} />
+                <Button
+                  name="intent"
+                  value="remove-certificate"
+                  variant="quiet"
+                  aria-label={`Remove ${name}`}
+                >
+                  Remove
+                </Button>
+              </Form>
+            </li>
+          ))}
+        </ul>
+        <Form method="post" className="mt-4 space-y-4" key={certificates.length} noValidate>
+          <TextField name="name" label="What it is, with its number" error={errors.name} />
+          <TextField name="expiresOn" label="Until" optional type="date" error={errors.expiresOn} />
+          <Button
+            name="intent"
+            value="add-certificate"
+            variant="secondary"
+            pending={intent === 'add-certificate'}
+          >
+            Add the certificate
+          </Button>
         </Form>
       </Panel>
     </div>

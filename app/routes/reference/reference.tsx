@@ -21,6 +21,34 @@ export async function loader({ context }: Route.LoaderArgs) {
   };
 }
 
+/** How a circuit works, in the order in which the refrigerant runs. Common practice, no source. */
+const HOW_IT_WORKS = [
+  {
+    at: 'Compressor',
+    text: 'It draws cold vapour from the low side and presses it into the high side, hot. Liquid would break it.',
+  },
+  {
+    at: 'Condenser',
+    text: 'Air takes the heat away; the hot vapour turns to warm liquid. Dirt or a dead fan shows as high pressure.',
+  },
+  {
+    at: 'Drier, or accumulator',
+    text: 'With an expansion valve, a drier on the high side holds back water and keeps liquid in reserve. With a fixed orifice, an accumulator on the low side keeps liquid from the compressor.',
+  },
+  {
+    at: 'Expansion valve or orifice',
+    text: 'Liquid is let through a narrow place into low pressure and turns very cold. Here the two sides part.',
+  },
+  {
+    at: 'Evaporator',
+    text: 'The cold liquid boils and takes heat from the cab’s air, and water out of it. Back to the compressor as vapour.',
+  },
+  {
+    at: 'A second branch',
+    text: 'A tee, a shut-off solenoid and a second evaporator or chiller: each can leak on its own, so test it on its own.',
+  },
+] as const;
+
 const PLACES = [
   { to: 'pressures', title: 'Pressures', text: 'Saturation of eleven refrigerants, as a plot and a table.' },
   {
@@ -81,6 +109,13 @@ export default function Reference({ loaderData: { names, methods } }: Route.Comp
         title="A refrigerant circuit"
         lead="The common arrangement (common practice, no source). Yours may differ: the maker’s drawing comes first."
       >
+        <ol className="mb-5 max-w-prose list-decimal space-y-2 pl-6">
+          {HOW_IT_WORKS.map(({ at, text }) => (
+            <li key={at}>
+              <span className="font-semibold">{at}.</span> {text}
+            </li>
+          ))}
+        </ol>
         <CircuitDrawing names={names} />
       </Panel>
     </div>

@@ -18,6 +18,7 @@ import { unitChoices } from '#app/features/cases/choices.ts';
 import { RefusalNotice } from '#app/features/cases/components/refusal-notice.tsx';
 import { fieldErrors, formObject, typedValues } from '#app/features/form-fields.ts';
 import { type Outcome, refuseFields } from '#app/features/outcome.ts';
+import { listCertificates } from '#app/features/people/certificates.server.ts';
 import { addCylinder, addMovement, reverseMovement } from '#app/features/refrigerant-book/commands.server.ts';
 import { DateFilter } from '#app/features/refrigerant-book/components/date-filter.tsx';
 import { MovementTable } from '#app/features/refrigerant-book/components/movement-table.tsx';
@@ -33,7 +34,13 @@ export const meta: Route.MetaFunction = () => [{ title: 'Refrigerant · Weepmark
 export async function loader({ context, url }: Route.LoaderArgs) {
   const viewer = requireActor(context);
   const input = parseBook(url.searchParams);
-  return { input, units: unitChoices(['mass'], viewer.preferences), ...(await loadBookPage(viewer, input)) };
+  const certificates = await listCertificates(viewer.shopId, viewer.userId, new Date());
+  return {
+    input,
+    certificate: certificates.find(({ state }) => state !== 'expired')?.name ?? '',
+    units: unitChoices(['mass'], viewer.preferences),
+    ...(await loadBookPage(viewer, input)),
+  };
 }
 
 export async function action({ request, context }: Route.ActionArgs) {
@@ -238,7 +245,7 @@ export default function Book({ loaderData, actionData }: Route.ComponentProps) {
                 name="certificate"
                 label="Certificate of who did it"
                 optional
-                defaultValue={typed('movement').certificate}
+                defaultValue={typed('movement').certificate ?? loaderData.certificate}
                 error={wrong('movement').certificate}
               />
             </div>

@@ -6,7 +6,7 @@ import { importLineSchema } from '#app/features/case-import/schema.ts';
 import { writeImportedCase } from '#app/features/case-import/write-case.server.ts';
 import { judgeLikeness } from '#app/features/find/alike.server.ts';
 import { storePhotoFromFile } from '#app/features/photos/store-from-file.server.ts';
-import { Case, Circuit, Machine, Shop, User, Yard } from '#db/models/index.ts';
+import { Case, Certificate, Circuit, Machine, Shop, User, Yard } from '#db/models/index.ts';
 import { closeImagePool } from '#storage/images.server.ts';
 import { type Crew, type PlacedPhoto, seedLiveCases } from './live-cases.server.ts';
 import { demoPassword, demoPeople, demoShops } from './people.ts';
@@ -38,6 +38,20 @@ export async function seedDemo(say: (text: string) => void): Promise<void> {
   await seedImported(person('lead@farside.example'), FARSIDE_CASES, now);
   await seedPlates();
   await Yard.update({ altitudeM: 310 }, { where: { name: 'Cobbleshaw' } });
+  await Certificate.bulkCreate([
+    {
+      shopId: crew.rhedyn.shopId,
+      userId: crew.rhedyn.userId,
+      name: 'shop certificate 14',
+      expiresOn: new Date(now.getTime() + 400 * DAY_MS),
+    },
+    {
+      shopId: crew.jesk.shopId,
+      userId: crew.jesk.userId,
+      name: 'shop certificate 17',
+      expiresOn: new Date(now.getTime() + 20 * DAY_MS),
+    },
+  ]);
   const live = await seedLiveCases(crew, now);
   await seedLikenesses(crew.tamsel, now);
   say('Loading the demo: photos (half a minute) …');

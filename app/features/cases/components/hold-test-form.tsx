@@ -1,13 +1,16 @@
+import { useState } from 'react';
 import { Form, useNavigation } from 'react-router';
 import { SelectField, TextArea, TextField } from '#app/components/forms/field.tsx';
 import { Button } from '#app/components/ui/button.tsx';
 import { UNITS } from '#app/domain/units/units.ts';
 import { HOLD_GAUGES } from '#app/features/reference/hold-input.ts';
 import type { LinkActionData } from '../link-action.server.ts';
+import { HoldTimer } from './hold-timer.tsx';
 import { OverrideField } from './override-field.tsx';
 import { RefusalNotice } from './refusal-notice.tsx';
 
 type Props = {
+  number: number;
   actionData: LinkActionData | undefined;
   count: number;
   start: { ambient: string; altitude: string; litres: string };
@@ -15,9 +18,11 @@ type Props = {
 };
 
 /** A vacuum hold from its readings; what it shows is worked out from them. */
-export function HoldTestForm({ actionData, count, start, mayOverride }: Props) {
+export function HoldTestForm({ number, actionData, count, start, mayOverride }: Props) {
   const mine = actionData?.form === 'hold-test' ? actionData : undefined;
   const errors = mine?.refusal.refused === 'fields' ? mine.refusal.fields : {};
+  const storageKey = `weepmark-hold-${number}`;
+  const [samples, setSamples] = useState(mine?.typed.samples ?? '');
   const pending = useNavigation().formData?.get('intent') === 'hold-test';
   const field = (name: string, otherwise = '') => ({
     name,
@@ -33,11 +38,20 @@ export function HoldTestForm({ actionData, count, start, mayOverride }: Props) {
       <summary className="tap flex items-center px-4 py-2 font-semibold text-action">
         Add a vacuum hold by its readings
       </summary>
-      <Form method="post" className="space-y-5 px-4 pb-4" noValidate>
+      <Form
+        method="post"
+        className="space-y-5 px-4 pb-4"
+        noValidate
+        onSubmit={() => localStorage.removeItem(storageKey)}
+      >
         <RefusalNotice refusal={mine?.refusal} />
         <OverrideField refusal={mine?.refusal} mayOverride={mayOverride} />
+        <HoldTimer storageKey={storageKey} onText={setSamples} />
         <TextArea
-          {...field('samples')}
+          name="samples"
+          value={samples}
+          onChange={(event) => setSamples(event.target.value)}
+          error={errors.samples}
           label="Minutes and reading, a line each"
           hint="Minutes since the pump was shut off, a space, the gauge."
           rows={8}
