@@ -11,6 +11,7 @@ import { LINK_NAMES } from '#app/domain/chain/chain.ts';
 import { may } from '#app/domain/permissions/matrix.ts';
 import { WRITE_UP_STATE_NAMES } from '#app/domain/write-ups/write-up-state.ts';
 import { type CaseRowView, loadBench } from '#app/features/cases/queries.server.ts';
+import { listCertificates } from '#app/features/people/certificates.server.ts';
 import { requireActor } from '#app/server/guards.server.ts';
 import type { Route } from './+types/bench.ts';
 
