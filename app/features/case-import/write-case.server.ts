@@ -1,6 +1,7 @@
 import type { Transaction } from 'sequelize';
 import { NONE_CONFIRMED } from '#app/domain/chain/evidence.ts';
 import type { Actor } from '#app/domain/permissions/actor.ts';
+import { slugOf } from '#app/domain/text/slug.ts';
 import { recordAudit } from '#app/features/audit/audit.server.ts';
 import { nextCaseNumber, setSymptoms } from '#app/features/cases/open-case.server.ts';
 import { settleCase } from '#app/features/cases/settle.server.ts';
@@ -215,12 +216,7 @@ async function writeNote(
     await before.update({ ...text, version: before.version + 1 }, { transaction });
     return;
   }
-  const slug = `${title
-    .normalize('NFKD')
-    .toLowerCase()
-    .replace(/[^a-z0-9]+/g, '-')
-    .replace(/^-+|-+$/g, '')
-    .slice(0, 80)}-${row.number}`;
+  const slug = `${slugOf(title, 80) || 'note'}-${row.number}`;
   const note = await WriteUp.create(
     {
       ...text,

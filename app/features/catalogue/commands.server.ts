@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import type { Actor } from '#app/domain/permissions/actor.ts';
 import { may } from '#app/domain/permissions/matrix.ts';
+import { slugOf } from '#app/domain/text/slug.ts';
 import { CATALOGUE_KINDS, entriesFor, entry } from '#app/domain/vocabulary/vocabulary.ts';
 import { recordAudit } from '#app/features/audit/audit.server.ts';
 import { done, Forbidden, type Outcome, refuseFields } from '#app/features/outcome.ts';
@@ -48,12 +49,7 @@ export async function addCatalogueEntry(
     (known) => known.name.toLowerCase() === name.toLowerCase(),
   );
   if (same) return refuseFields({ name: 'The catalogue has this already.' });
-  const base = `own-${name
-    .normalize('NFKD')
-    .toLowerCase()
-    .replace(/[^a-z0-9]+/g, '-')
-    .replace(/^-+|-+$/g, '')
-    .slice(0, 40)}`;
+  const base = `own-${slugOf(name, 40)}`;
   return transact(async (transaction) => {
     const taken = await CatalogueEntry.count({ where: { shopId: actor.shopId, kind }, transaction });
     const entryId = entry(vocabulary, kind, base) ? `${base}-${taken + 1}` : base;

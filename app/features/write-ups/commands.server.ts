@@ -2,6 +2,7 @@ import type { Transaction } from 'sequelize';
 import { lackingForCause, lackingForCure } from '#app/domain/chain/chain.ts';
 import type { Actor } from '#app/domain/permissions/actor.ts';
 import { type Action, may } from '#app/domain/permissions/matrix.ts';
+import { slugOf } from '#app/domain/text/slug.ts';
 import { nextWriteUpState } from '#app/domain/write-ups/write-up-state.ts';
 import { recordAudit } from '#app/features/audit/audit.server.ts';
 import { findCaseRow } from '#app/features/cases/change-case.server.ts';
@@ -139,13 +140,7 @@ async function ownPhotos(caseId: number, ids: number[], transaction: Transaction
 }
 
 async function freeSlug(row: Case, title: string, transaction: Transaction): Promise<string> {
-  const words = title
-    .normalize('NFKD')
-    .toLowerCase()
-    .replace(/[^a-z0-9]+/g, '-')
-    .replace(/^-+|-+$/g, '')
-    .slice(0, 80);
-  const slug = `${words || 'note'}-${row.number}`;
+  const slug = `${slugOf(title, 80) || 'note'}-${row.number}`;
   const taken = await WriteUp.count({ where: { shopId: row.shopId, slug }, transaction });
   return taken ? `${slug}-${row.id}` : slug;
 }

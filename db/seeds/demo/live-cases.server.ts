@@ -1,30 +1,14 @@
 import type { LinkKey } from '#app/domain/chain/chain.ts';
 import type { Actor } from '#app/domain/permissions/actor.ts';
-import {
-  addComment,
-  parkCase,
-  returnToWork,
-  saveNotes,
-  saySameOnMine,
-} from '#app/features/cases/commands.server.ts';
+import { addComment, parkCase, returnToWork, saveNotes } from '#app/features/cases/commands.server.ts';
 import { addEntry } from '#app/features/cases/entries.server.ts';
 import { addHoldTest } from '#app/features/cases/hold-tests.server.ts';
 import { openCase } from '#app/features/cases/open-case.server.ts';
 import type { EntryInput, EntryKind, OpenCaseInput } from '#app/features/cases/schema.ts';
 import { openCaseSchema } from '#app/features/cases/schema.ts';
 import type { Outcome } from '#app/features/outcome.ts';
-import { addCylinder, addMovement, reverseMovement } from '#app/features/refrigerant-book/commands.server.ts';
-import { movementSchema } from '#app/features/refrigerant-book/schema.ts';
-import {
-  answerFlag,
-  flagWriteUp,
-  publishWriteUp,
-  saveWriteUp,
-  sendBackWriteUp,
-  submitWriteUp,
-  withdrawWriteUp,
-} from '#app/features/write-ups/commands.server.ts';
-import { Case, Movement, WriteUpFlag } from '#db/models/index.ts';
+import { saveWriteUp, sendBackWriteUp, submitWriteUp } from '#app/features/write-ups/commands.server.ts';
+import { seedBook, talkOnImported } from './live-talk.server.ts';
 import { type DemoPhoto, GAUGES, PAIRS } from './photos.ts';
 
 export type Crew = { rhedyn: Actor; jesk: Actor; tamsel: Actor; ottolie: Actor };
@@ -33,7 +17,7 @@ export type PlacedPhoto = { number: number; actor: Actor; link: LinkKey; photo: 
 const HOUR_MS = 60 * 60_000;
 
 /** A value that must have been accepted: the demo takes the same way as a person does. */
-function accepted<T>(outcome: Outcome<T>): T {
+export function accepted<T>(outcome: Outcome<T>): T {
   if (!outcome.ok) throw new Error(`the demo was refused: ${JSON.stringify(outcome)}`);
   return outcome.value;
 }
@@ -355,131 +339,6 @@ export async function seedLiveCases(crew: Crew, now: Date): Promise<PlacedPhoto[
   await seedBook(crew, running, hoursAgo);
   await talkOnImported(crew, hoursAgo, ottolie);
   return photos;
-}
-
-/** A few cylinders and what moved between them and the machines. */
-async function seedBook(
-  { rhedyn, ottolie }: Crew,
-  number: number,
-  hoursAgo: (hours: number) => Date,
-): Promise<void> {
-  const cylinder = async (label: string, kind: 'new' | 'recovery' | 'can') =>
-    accepted(await addCylinder(ottolie, { label, refrigerant: 'R-134a', kind }, hoursAgo(2000))).id;
-  const move = async (actor: Actor, hours: number, fields: Record<string, unknown>) =>
-    accepted(await addMovement(actor, movementSchema.parse({ unit: 'g', ...fields }), hoursAgo(hours)));
-  const [five, two] = [await cylinder('Cylinder 5', 'new'), await cylinder('Recovery 2', 'recovery')];
-  await cylinder('Can box A', 'can');
-  await move(ottolie, 1990, {
-    kind: 'bought',
-    cylinder: five,
-    amount: '13.6',
-    unit: 'kg',
-    note: 'Full, tare checked.',
-  });
-  const certificate = 'shop certificate 14';
-  await move(rhedyn, 245, {
-    kind: 'recovered',
-    cylinder: two,
-    amount: '540',
-    machine: 'W04',
-    caseNumber: String(number),
-    certificate,
-  });
-  await move(rhedyn, 244, {
-    kind: 'charged',
-    cylinder: five,
-    amount: '1510',
-    machine: 'W04',
-    caseNumber: String(number),
-    certificate,
-  });
-  const wrong = await Movement.findOne({
-    where: { shopId: rhedyn.shopId, grams: 1510 },
-    rejectOnEmpty: true,
-  });
-  accepted(await reverseMovement(ottolie, wrong.id, 'Digits turned round on the sheet.', hoursAgo(200)));
-  await move(rhedyn, 199, {
-    kind: 'charged',
-    cylinder: five,
-    amount: '1150',
-    machine: 'W04',
-    caseNumber: String(number),
-    certificate,
-  });
-}
-
-/** Comments, flags, a revision and a withdrawal on cases that came in with the import. */
-async function talkOnImported(
-  { rhedyn, jesk, tamsel }: Crew,
-  hoursAgo: (hours: number) => Date,
-  ottolie: Actor,
-) {
-  const rows = await Case.findAll({
-    where: { externalId: ['BW-1318', 'BW-1325', 'BW-1268', 'BW-1359', 'BW-1336'], shopId: tamsel.shopId },
-  });
-  const numbers = new Map(rows.map(({ externalId, number }) => [externalId, number]));
-  const on = (actor: Actor, externalId: string) => ({ actor, number: numbers.get(externalId) ?? 0 });
-  accepted(
-    await addComment(on(rhedyn, 'BW-1318'), 'Had my doubts about that switch for years.', hoursAgo(900)),
-  );
-  accepted(
-    await addComment(on(jesk, 'BW-1318'), 'same bin of o rings i think. threw the rest out', hoursAgo(880)),
-  );
-  accepted(
-    await saySameOnMine(
-      on(jesk, 'BW-1318'),
-      { machine: 'W07', note: 'Same switch, same ring, two weeks later.' },
-      hoursAgo(870),
-    ),
-  );
-  accepted(
-    await addComment(
-      on(ottolie, 'BW-1359'),
-      'Part came on the Tuesday van, invoice is filed.',
-      hoursAgo(500),
-    ),
-  );
-  accepted(
-    await flagWriteUp(
-      on(jesk, 'BW-1325'),
-      'Which torque? The note says snug, the next one will not know what that is.',
-      hoursAgo(300),
-    ),
-  );
-  const flagged = await WriteUpFlag.findOne({ where: { shopId: tamsel.shopId }, rejectOnEmpty: true });
-  accepted(
-    await answerFlag(
-      on(tamsel, 'BW-1325'),
-      flagged.id,
-      'Fair. The maker’s manual has the figure for this port; look it up each time, it differs by make.',
-      hoursAgo(290),
-    ),
-  );
-  accepted(
-    await flagWriteUp(
-      on(rhedyn, 'BW-1268'),
-      'The switch is on the other line on the newer ones.',
-      hoursAgo(30),
-    ),
-  );
-  accepted(
-    await withdrawWriteUp(
-      on(tamsel, 'BW-1336'),
-      'Superseded: the later case shows that the cap was not the cause.',
-      hoursAgo(200),
-    ),
-  );
-  const revised = `Look under the switch before anything else on this model.\n\n1. Lamp under the hex.\n2. Detector below it, engine off.\n3. New ring, oiled, and a new switch if the thread is marked.\n`;
-  accepted(
-    await publishWriteUp(
-      on(tamsel, 'BW-1318'),
-      {
-        input: { title: 'Switch first, then the rest', body: revised, photos: [], version: undefined },
-        override: 'Earlier record; the pictures are with the paper job card.',
-      },
-      hoursAgo(150),
-    ),
-  );
 }
 
 function isoDay(time: Date): string {
