@@ -14,6 +14,9 @@ import { migration as m10 } from './migrations/20261201-1100-yard-altitude.ts';
 import { migration as m11 } from './migrations/20261201-1200-hold-tests.ts';
 import { migration as m12 } from './migrations/20261201-1300-refrigerant-book.ts';
 import { migration as m13 } from './migrations/20261201-1400-certificates.ts';
+import { migration as m14 } from './migrations/20261201-1500-movement-circuit.ts';
+import { migration as m15 } from './migrations/20261201-1600-charge-cylinder.ts';
+import { migration as m16 } from './migrations/20261201-1700-reading-photo.ts';
 
 /** In the order they run. A static list, so that a built server needs no folder to look into. */
 const MIGRATIONS = {
@@ -31,6 +34,9 @@ const MIGRATIONS = {
   '20261201-1200-hold-tests': m11,
   '20261201-1300-refrigerant-book': m12,
   '20261201-1400-certificates': m13,
+  '20261201-1500-movement-circuit': m14,
+  '20261201-1600-charge-cylinder': m15,
+  '20261201-1700-reading-photo': m16,
 };
 
 /** Brings the schema up to date; answers the names of the migrations it ran. MariaDB commits DDL by itself, so each is one change. */

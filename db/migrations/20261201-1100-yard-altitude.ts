@@ -1,10 +1,6 @@
-import type { Migration } from './tables.ts';
+import { statements } from './tables.ts';
 
-export const migration: Migration = {
-  async up({ context }) {
-    await context.query('ALTER TABLE yards ADD COLUMN altitudeM INT NOT NULL DEFAULT 0');
-  },
-  async down({ context }) {
-    await context.query('ALTER TABLE yards DROP COLUMN altitudeM');
-  },
-};
+export const migration = statements({
+  up: ['ALTER TABLE yards ADD COLUMN altitudeM INT NOT NULL DEFAULT 0'],
+  down: ['ALTER TABLE yards DROP COLUMN altitudeM'],
+});

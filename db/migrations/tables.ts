@@ -19,3 +19,13 @@ export function createTables(tables: Record<string, string>): Migration {
     },
   };
 }
+
+/** A migration of plain statements, run one after the other. */
+export function statements({ up, down }: { up: readonly string[]; down: readonly string[] }): Migration {
+  const run =
+    (all: readonly string[]): Step =>
+    async ({ context }) => {
+      for (const statement of all) await context.query(statement);
+    };
+  return { up: run(up), down: run(down) };
+}

@@ -14,6 +14,7 @@ export class Reading extends Model<InferAttributes<Reading>, InferCreationAttrib
   declare valueSi: number;
   declare takenAt: Date;
   declare note: CreationOptional<string>;
+  declare photoId: CreationOptional<number | null>;
   declare byId: CreationOptional<number | null>;
   declare byName: CreationOptional<string>;
 }
@@ -29,6 +30,7 @@ Reading.init(
     valueSi: real(),
     takenAt: moment(),
     note: text(),
+    photoId: refOrNull(),
     byId: refOrNull(),
     byName: word(),
   },
@@ -175,6 +177,7 @@ export class Charge extends Model<InferAttributes<Charge>, InferCreationAttribut
   declare entered: CreationOptional<string>;
   declare unit: CreationOptional<string>;
   declare amountSi: number;
+  declare cylinderId: CreationOptional<number | null>;
   declare source: CreationOptional<string>;
   declare note: CreationOptional<string>;
   declare at: Date;
@@ -192,6 +195,7 @@ Charge.init(
     entered: word(60),
     unit: word(60),
     amountSi: real(),
+    cylinderId: refOrNull(),
     source: word(),
     note: text(),
     at: moment(),

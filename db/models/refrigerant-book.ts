@@ -1,6 +1,6 @@
 import { type CreationOptional, type InferAttributes, type InferCreationAttributes, Model } from 'sequelize';
 import type { CylinderKind, MovementKind } from '#app/domain/refrigerant-book/book.ts';
-import { id, moment, ref, refOrNull, text, whole, word } from '../columns.ts';
+import { id, moment, ref, refOrNull, text, whole, wholeOrNull, word } from '../columns.ts';
 import { sequelize } from '../connection.server.ts';
 
 export class Cylinder extends Model<InferAttributes<Cylinder>, InferCreationAttributes<Cylinder>> {
@@ -24,11 +24,15 @@ export class Movement extends Model<InferAttributes<Movement>, InferCreationAttr
   declare kind: MovementKind;
   declare refrigerant: string;
   declare grams: number;
+  /** What the scale showed, for a weighing; the movement itself is the difference from the book. */
+  declare weighedGrams: CreationOptional<number | null>;
   declare fromAccount: string;
   declare toAccount: string;
   declare cylinderId: CreationOptional<number | null>;
   declare machineId: CreationOptional<number | null>;
+  declare circuitId: CreationOptional<number | null>;
   declare caseId: CreationOptional<number | null>;
+  declare chargeId: CreationOptional<number | null>;
   declare certificate: CreationOptional<string>;
   declare note: CreationOptional<string>;
   declare reversesId: CreationOptional<number | null>;
@@ -44,11 +48,14 @@ Movement.init(
     kind: word(20),
     refrigerant: word(20),
     grams: whole(),
+    weighedGrams: wholeOrNull(),
     fromAccount: word(40),
     toAccount: word(40),
     cylinderId: refOrNull(),
     machineId: refOrNull(),
+    circuitId: refOrNull(),
     caseId: refOrNull(),
+    chargeId: refOrNull(),
     certificate: word(),
     note: text(),
     reversesId: refOrNull(),

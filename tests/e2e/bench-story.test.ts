@@ -54,18 +54,21 @@ test('recovery, repair, hold test, a charge refused and then allowed, and the in
   await tech.getByText('no entry says that it was taken out').waitFor();
   expect(await tech.getByLabel('Minutes and reading, a line each').inputValue()).toBe(HOLD);
 
-  const charge = async (kind: string, grams: string) => {
+  const charge = async (kind: string, grams: string, cylinder: string) => {
     await tech.goto(`/cases/${number}/charge`);
     const radio = tech.getByRole('radio', { name: kind });
     if ((await radio.isVisible()) === false)
       await tech.locator('summary', { hasText: 'Add what went in or came out' }).click();
     await radio.check();
     await tech.getByRole('textbox', { name: 'How much' }).fill(grams);
+    const list = tech.getByLabel('From or into which cylinder or can');
+    const label = await list.locator('option', { hasText: cylinder }).textContent();
+    await list.selectOption({ label: label ?? '' });
     await tech.getByRole('button', { name: 'Add', exact: true }).click();
   };
-  await charge('Taken out', '430');
+  await charge('Taken out', '430', 'Recovery 2');
   await tech.getByText('Added.').waitFor();
-  await charge('Put in', '1150');
+  await charge('Put in', '1150', 'Cylinder 5');
   await tech
     .getByRole('alert')
     .filter({ hasText: 'No refrigerant goes in while the newest proof is missing' })
@@ -78,24 +81,21 @@ test('recovery, repair, hold test, a charge refused and then allowed, and the in
   await holdTest();
   await tech.getByText('Hold test recorded.').waitFor();
   await tech.getByRole('img', { name: /Hold curve/ }).waitFor();
-  await charge('Put in', '1300');
+  await charge('Put in', '1300', 'Cylinder 5');
   await tech.getByText('this would make 1300 g where the plate says 1150 g').waitFor();
-  await charge('Put in', '1150');
+  await charge('Put in', '1150', 'Cylinder 5');
   await tech.getByText('Added.').waitFor();
   await tech.getByRole('button', { name: 'The machine goes back to work' }).click();
   await tech.getByText('Back to work.').waitFor();
 
   const office = await pageFor('office@brackwater.example', DESK);
   await office.goto('/refrigerant');
-  await office.getByLabel('What happened').selectOption('charged');
-  const label = await office
-    .getByLabel('Cylinder or can')
-    .locator('option', { hasText: 'Cylinder 5' })
-    .textContent();
-  await office.getByLabel('Cylinder or can').selectOption({ label: label ?? '' });
-  await office.getByRole('textbox', { name: 'Weight' }).fill('1150');
-  await office.getByRole('textbox', { name: 'Machine' }).first().fill('W04');
-  await office.getByRole('textbox', { name: /^Case/ }).fill(String(number));
+  await office.getByText('The book balances').waitFor();
+  await office.getByLabel('What happened').selectOption('weighed');
+  const cylinders = office.getByLabel('Cylinder or can');
+  const label = await cylinders.locator('option', { hasText: 'Recovery 2' }).textContent();
+  await cylinders.selectOption({ label: label ?? '' });
+  await office.getByRole('textbox', { name: 'Net weight on the scale' }).fill('965');
   await office.getByRole('button', { name: 'Enter it' }).click();
   await office.getByText('Entered in the book.').waitFor();
   await office.getByText('The book balances').waitFor();

@@ -1,19 +1,32 @@
 import fc from 'fast-check';
 import { expect, test } from 'vitest';
-import { accountsOf, balances, cylinderAccount, MOVEMENT_KINDS } from './book.ts';
+import {
+  accountsOf,
+  balances,
+  circuitAccount,
+  cylinderAccount,
+  MOVEMENT_KINDS,
+  type MovementKind,
+  placeOf,
+  weighing,
+} from './book.ts';
+
+const PLAIN_KINDS = MOVEMENT_KINDS.filter(
+  (kind): kind is Exclude<MovementKind, 'weighed'> => kind !== 'weighed',
+);
 
 const movement = fc.record({
-  kind: fc.constantFrom(...MOVEMENT_KINDS),
+  kind: fc.constantFrom(...PLAIN_KINDS),
   cylinderId: fc.integer({ min: 1, max: 3 }),
-  machineId: fc.integer({ min: 1, max: 3 }),
+  circuitId: fc.integer({ min: 1, max: 3 }),
   grams: fc.integer({ min: 1, max: 5000 }),
 });
 
 test('whatever is entered, nothing is made and nothing vanishes', () => {
   fc.assert(
     fc.property(fc.array(movement), (movements) => {
-      const entries = movements.map(({ kind, cylinderId, machineId, grams }) => {
-        const { from, to } = accountsOf(kind, cylinderId, machineId);
+      const entries = movements.map(({ kind, cylinderId, circuitId, grams }) => {
+        const { from, to } = accountsOf(kind, cylinderId, circuitId);
         return { fromAccount: from, toAccount: to, grams };
       });
       expect([...balances(entries).values()].reduce((sum, grams) => sum + grams, 0)).toBe(0);
@@ -29,12 +42,38 @@ test('a movement and its reversal leave the accounts as they were', () => {
     { fromAccount: to, toAccount: from, grams: 1150 },
   ]);
   expect(held.get(cylinderAccount(1))).toBe(13_608);
-  expect(held.get('machine:7')).toBe(0);
+  expect(held.get(circuitAccount(7))).toBe(0);
 });
 
-test('every kind moves between two different accounts', () => {
-  for (const kind of MOVEMENT_KINDS) {
+test('every kind but an opening moves between two different accounts', () => {
+  for (const kind of PLAIN_KINDS) {
     const { from, to } = accountsOf(kind, 1, 2);
-    expect(from).not.toBe(to);
+    expect(from === to).toBe(kind === 'opened');
   }
+});
+
+test.each([
+  ['bought', 'supplier', 'cylinder'],
+  ['charged', 'cylinder', 'circuit'],
+  ['recovered', 'circuit', 'cylinder'],
+  ['reclaimed', 'cylinder', 'reclaimer'],
+  ['returned', 'cylinder', 'supplier'],
+  ['lost', 'cylinder', 'lost'],
+] as const)('%s: from %s to %s', (kind, from, to) => {
+  const accounts = accountsOf(kind, 1, 2);
+  expect([placeOf(accounts.from), placeOf(accounts.to)]).toEqual([from, to]);
+});
+
+test('after a weighing the book says what the scale said', () => {
+  fc.assert(
+    fc.property(fc.nat(20_000), fc.nat(20_000), (bookGrams, scaleGrams) => {
+      const { from, to, grams } = weighing(1, bookGrams, scaleGrams);
+      const held = balances([
+        { fromAccount: 'supplier', toAccount: cylinderAccount(1), grams: bookGrams },
+        { fromAccount: from, toAccount: to, grams },
+      ]);
+      expect(grams).toBeGreaterThanOrEqual(0);
+      expect(held.get(cylinderAccount(1))).toBe(scaleGrams);
+    }),
+  );
 });

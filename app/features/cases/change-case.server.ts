@@ -3,7 +3,7 @@ import type { LinkKey } from '#app/domain/chain/chain.ts';
 import type { Actor } from '#app/domain/permissions/actor.ts';
 import { type Action, may } from '#app/domain/permissions/matrix.ts';
 import { recordAudit } from '#app/features/audit/audit.server.ts';
-import { Forbidden, NotFound, type Outcome } from '#app/features/outcome.ts';
+import { Forbidden, NotFound, type Outcome, type Refusal } from '#app/features/outcome.ts';
 import { AuditEntry, Case } from '#db/models/index.ts';
 import { transact } from '#db/transact.server.ts';
 import { settleCase } from './settle.server.ts';
@@ -38,27 +38,44 @@ export async function requireOnCase(actor: Actor, number: number, needs: Action)
   if (!may(actor.role, needs)) throw new Forbidden();
 }
 
-/** The one way in which a case changes: authorised, locked, checked against what the person saw, written to the history, settled. */
+/** Carries a refusal out of the transaction, so that nothing of a refused change stays. */
+class Refused extends Error {
+  constructor(readonly refusal: { ok: false } & Refusal) {
+    super('refused');
+  }
+}
+
+/**
+ * The one way in which a case changes: authorised, locked, checked against what the person saw, written to the history,
+ * settled; a refused change leaves nothing behind.
+ */
 export async function changeCase<T>(options: Change<T>): Promise<Outcome<T>> {
+  try {
+    return await transact((transaction) => changeWithin(options, transaction));
+  } catch (error) {
+    if (error instanceof Refused) return error.refusal;
+    throw error;
+  }
+}
+
+async function changeWithin<T>(options: Change<T>, transaction: Transaction): Promise<Outcome<T>> {
   const { actor, number, needs, link, version, present, audit, at = new Date(), change } = options;
-  return transact(async (transaction) => {
-    const row = await findCaseRow(actor, number, transaction);
-    if (!may(actor.role, needs)) throw new Forbidden();
-    if (link && version !== undefined && version !== (row.versions[link] ?? 1)) {
-      return conflict(row, link, (await present?.(row, transaction)) ?? {}, transaction);
-    }
-    const outcome = await change(row, transaction);
-    if (!outcome.ok) return outcome;
-    if (link) row.versions = { ...row.versions, [link]: (row.versions[link] ?? 1) + 1 };
-    await row.save({ transaction });
-    const detail = { ...(link ? { link } : {}), ...audit.detail };
-    await recordAudit(
-      { actor, action: audit.action, subject: link ?? 'case', subjectId: row.id, caseId: row.id, detail, at },
-      transaction,
-    );
-    await settleCase(row.id, transaction, at);
-    return outcome;
-  });
+  const row = await findCaseRow(actor, number, transaction);
+  if (!may(actor.role, needs)) throw new Forbidden();
+  if (link && version !== undefined && version !== (row.versions[link] ?? 1)) {
+    return conflict(row, link, (await present?.(row, transaction)) ?? {}, transaction);
+  }
+  const outcome = await change(row, transaction);
+  if (!outcome.ok) throw new Refused(outcome);
+  if (link) row.versions = { ...row.versions, [link]: (row.versions[link] ?? 1) + 1 };
+  await row.save({ transaction });
+  const detail = { ...(link ? { link } : {}), ...audit.detail };
+  await recordAudit(
+    { actor, action: audit.action, subject: link ?? 'case', subjectId: row.id, caseId: row.id, detail, at },
+    transaction,
+  );
+  await settleCase(row.id, transaction, at);
+  return outcome;
 }
 
 async function conflict(row: Case, link: LinkKey, theirs: Record<string, string>, transaction: Transaction) {

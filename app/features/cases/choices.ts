@@ -25,8 +25,16 @@ export function unitChoices(quantities: readonly Quantity[], preferences: Prefer
   });
 }
 
+/** What a case's own rows add to the choices: the gauge photos taken, the cylinders of the book. */
+export type OwnChoices = { photos: Choice[]; cylinders: Choice[] };
+
 /** Everything that the entry forms of a case's links offer to choose from. */
-export function linkChoices(vocabulary: Vocabulary, medium: string, preferences: Preferences) {
+export function linkChoices(
+  vocabulary: Vocabulary,
+  medium: string,
+  preferences: Preferences,
+  own: OwnChoices,
+) {
   const isFluid = medium !== 'refrigerant';
   return {
     readingKinds: readingKindsFor(medium).map(({ id, name, quantity }) => ({
@@ -43,6 +51,7 @@ export function linkChoices(vocabulary: Vocabulary, medium: string, preferences:
     mechanisms: choicesOf(vocabulary, 'mechanism'),
     causes: choicesOf(vocabulary, 'cause'),
     actions: choicesOf(vocabulary, 'repair-action'),
+    ...own,
   };
 }
 export type LinkChoices = ReturnType<typeof linkChoices>;

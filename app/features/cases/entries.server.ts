@@ -1,9 +1,20 @@
-import type { Model, ModelStatic } from 'sequelize';
+import type { Model, ModelStatic, Transaction } from 'sequelize';
 import type { Actor } from '#app/domain/permissions/actor.ts';
 import { shopVocabulary } from '#app/features/catalogue/queries.server.ts';
-import { done, NotFound, type Outcome, refuseFields } from '#app/features/outcome.ts';
-import { Charge, Finding, Proof, Reading, RepairAction, TraceMethod } from '#db/models/index.ts';
+import { done, type FieldErrors, NotFound, type Outcome, refuseFields } from '#app/features/outcome.ts';
+import { lockCylinder } from '#app/features/refrigerant-book/movements.server.ts';
+import {
+  type Case,
+  Charge,
+  Finding,
+  Photo,
+  Proof,
+  Reading,
+  RepairAction,
+  TraceMethod,
+} from '#db/models/index.ts';
 import { changeCase } from './change-case.server.ts';
+import { enterInBook, takeOutOfBook } from './charge-book.server.ts';
 import { isComputedProof } from './computed-proofs.ts';
 import { entryValues } from './entry-values.ts';
 import { gatesBeforeCharge, passGates } from './gates.server.ts';
@@ -59,6 +70,8 @@ export async function addEntry<K extends EntryKind>({
     async change(row, transaction) {
       const { values, fields } = entryValues(kind, input, { medium: row.medium, vocabulary });
       if (Object.keys(fields).length > 0) return refuseFields(fields);
+      const fault = await foreignRows(row, values, transaction);
+      if (fault) return refuseFields(fault);
       const gates =
         kind === 'charge' ? await gatesBeforeCharge(row, input as EntryInput<'charge'>, transaction) : [];
       const refused = await passGates({ actor, row, gates, override, at: at ?? new Date() }, transaction);
@@ -75,6 +88,10 @@ export async function addEntry<K extends EntryKind>({
         },
         { transaction },
       );
+      if (created instanceof Charge) {
+        const entered = await enterInBook({ actor, row, charge: created, at: at ?? new Date() }, transaction);
+        if (!entered.ok) return entered;
+      }
       return done({ id: created.get('id') as number });
     },
   });
@@ -107,14 +124,24 @@ export async function changeEntry<K extends EntryKind>(options: ChangeEntry<K>):
           });
         }
       }
+      const fault = await foreignRows(row, values, transaction);
+      if (fault) return refuseFields(fault);
       const gates =
         kind === 'charge'
           ? await gatesBeforeCharge(row, input as EntryInput<'charge'>, transaction, entryId)
           : [];
       const refused = await passGates({ actor, row, gates, override, at: new Date() }, transaction);
       if (refused) return refused;
+      if (!(found instanceof Charge)) {
+        await found.update(values, { transaction });
+        return done();
+      }
+      const at = new Date();
+      const takenOut = await takeOutOfBook({ actor, row, charge: found, at }, transaction);
+      if (!takenOut.ok) return takenOut;
       await found.update(values, { transaction });
-      return done();
+      const entered = await enterInBook({ actor, row, charge: found, at }, transaction);
+      return entered.ok ? done() : entered;
     },
   });
 }
@@ -133,17 +160,40 @@ export async function removeEntry({ actor, number, kind, entryId }: RemoveEntry)
       const found = await MODELS[kind].findOne({ where: { id: entryId, caseId: row.id }, transaction });
       if (!found) throw new NotFound();
       removed.was = found.get({ plain: true });
+      if (found instanceof Charge) {
+        const takenOut = await takeOutOfBook({ actor, row, charge: found, at: new Date() }, transaction);
+        if (!takenOut.ok) return takenOut;
+      }
       await found.destroy({ transaction });
       return done();
     },
   });
 }
 
+/**
+ * A reading shows a photo of its own case only; a charge names a cylinder of its own shop. The cylinder is locked here,
+ * before the entry's foreign key takes a shared lock on it: two who then both want it whole would block each other.
+ */
+async function foreignRows(
+  row: Case,
+  { photoId, cylinderId }: Record<string, unknown>,
+  transaction: Transaction,
+): Promise<FieldErrors | null> {
+  if (
+    typeof photoId === 'number' &&
+    !(await Photo.count({ where: { id: photoId, caseId: row.id, deletedAt: null }, transaction }))
+  )
+    return { photo: 'Choose a photo of this case.' };
+  if (typeof cylinderId === 'number' && !(await lockCylinder(row.shopId, cylinderId, transaction)))
+    return { cylinder: 'Choose a cylinder of this shop.' };
+  return null;
+}
+
 async function presentEntry(
   kind: EntryKind,
   entryId: number,
   caseId: number,
-  transaction: Parameters<Parameters<typeof changeCase>[0]['change']>[1],
+  transaction: Transaction,
 ): Promise<Record<string, string>> {
   const found = await MODELS[kind].findOne({ where: { id: entryId, caseId }, transaction });
   if (!found) return { '': 'It was removed.' };
@@ -158,6 +208,8 @@ async function presentEntry(
     'takenAt',
     'valueSi',
     'amountSi',
+    'photoId',
+    'cylinderId',
   ]);
   return Object.fromEntries(
     Object.entries(plain)

@@ -54,7 +54,7 @@ export function entryValues<K extends EntryKind>(
   throw new Error(`unknown entry kind ${kind satisfies never}`);
 }
 
-function readingValues({ kind, value, unit, note }: EntryInput<'reading'>, medium: string): Checked {
+function readingValues({ kind, value, unit, note, photo }: EntryInput<'reading'>, medium: string): Checked {
   const definition = readingKind(kind);
   const number = parseTypedNumber(value);
   if (!definition || (definition.media.length > 0 && !definition.media.includes(medium))) {
@@ -68,7 +68,7 @@ function readingValues({ kind, value, unit, note }: EntryInput<'reading'>, mediu
   const valueSi = toSi(number, unit);
   const fields: FieldErrors =
     definition.quantity === 'temperature' && valueSi < 0 ? { value: 'It cannot be that cold.' } : {};
-  return { values: { kind, entered: value, unit, valueSi, note }, fields };
+  return { values: { kind, entered: value, unit, valueSi, note, photoId: Number(photo) || null }, fields };
 }
 
 function proofValues({ method, verdict, minutes, start, end, unit, note }: EntryInput<'proof'>): Checked {
@@ -86,8 +86,20 @@ function proofValues({ method, verdict, minutes, start, end, unit, note }: Entry
   };
 }
 
-function chargeValues({ kind, substance, value, unit, source, note }: EntryInput<'charge'>): Checked {
+function chargeValues({
+  kind,
+  substance,
+  value,
+  unit,
+  cylinder,
+  source,
+  note,
+}: EntryInput<'charge'>): Checked {
   const number = parseTypedNumber(value);
   const amountSi = number !== null && isUnit(unit) ? toSi(number, unit) : 0;
-  return { values: { kind, substance, entered: value, unit, amountSi, source, note }, fields: {} };
+  const cylinderId = Number(cylinder) || null;
+  return {
+    values: { kind, substance, entered: value, unit, amountSi, cylinderId, source, note },
+    fields: {},
+  };
 }

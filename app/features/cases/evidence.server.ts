@@ -4,6 +4,7 @@ import {
   type Case,
   CaseSymptom,
   Charge,
+  Cylinder,
   Finding,
   GateOverride,
   Photo,
@@ -47,7 +48,22 @@ export async function loadEvidence(caseId: number, transaction?: Transaction) {
       transaction,
     }),
   ];
-  return { symptoms, readings, methods, findings, repairs, proofs, charges, overrides, writeUp, tracePhotos };
+  const cylinderIds = charges.flatMap(({ cylinderId }) => (cylinderId === null ? [] : [cylinderId]));
+  const cylinders =
+    cylinderIds.length > 0 ? await Cylinder.findAll({ where: { id: cylinderIds }, transaction }) : [];
+  return {
+    symptoms,
+    readings,
+    methods,
+    findings,
+    repairs,
+    proofs,
+    charges,
+    overrides,
+    writeUp,
+    tracePhotos,
+    cylinders,
+  };
 }
 
 export type Evidence = Awaited<ReturnType<typeof loadEvidence>>;

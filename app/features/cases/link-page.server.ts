@@ -3,6 +3,8 @@ import { may } from '#app/domain/permissions/matrix.ts';
 import { preferredUnits } from '#app/domain/units/preferences.ts';
 import { cautionsFor, usualProofs } from '#app/domain/vocabulary/vocabulary.ts';
 import { listCasePhotos } from '#app/features/photos/queries.server.ts';
+import type { PhotoView } from '#app/features/photos/views.ts';
+import { cylinderChoices } from '#app/features/refrigerant-book/queries.server.ts';
 import { readForm } from '#app/server/forms.server.ts';
 import { orRefuse, requireActor, wholeParam } from '#app/server/guards.server.ts';
 import { requireOnCase } from './change-case.server.ts';
@@ -19,17 +21,25 @@ type Args = { request: Request; context: Readonly<RouterContextProvider>; params
 export async function linkLoader({ context, params }: Args, link: NotedLink) {
   const viewer = requireActor(context);
   const number = wholeParam(params.number);
-  const { row, evidence, vocabulary, view } = await orRefuse(loadLinks(viewer, number));
+  const { row, evidence, vocabulary, circuit, view } = await orRefuse(loadLinks(viewer, number));
   const spoken = await readingsSpeak(row, evidence);
-  const photos = await listCasePhotos(viewer, number);
+  const casePhotos = await listCasePhotos(viewer, number);
+  const photos = { ...casePhotos, photos: casePhotos.photos.filter((photo) => photo.link === link) };
+  const own = {
+    photos: link === 'readings' ? photos.photos.map(photoChoice) : [],
+    cylinders:
+      link === 'charge' && row.medium === 'refrigerant'
+        ? await cylinderChoices(viewer, circuit.refrigerant)
+        : [],
+  };
   return {
     number,
     medium: row.medium,
     links: view,
     lacks: row.chain.find(({ key }) => key === link)?.lacks ?? [],
-    choices: linkChoices(vocabulary, row.medium, viewer.preferences),
+    choices: linkChoices(vocabulary, row.medium, viewer.preferences, own),
     mayEdit: may(viewer.role, 'case:edit'),
-    photos: { ...photos, photos: photos.photos.filter((photo) => photo.link === link) },
+    photos,
     cautions: link === 'readings' ? [] : cautionsFor(link, row.medium),
     usualProofs: link === 'proof' ? usualProofs(row.medium) : [],
     spoken,
@@ -43,6 +53,11 @@ export async function linkLoader({ context, params }: Args, link: NotedLink) {
       !(spoken.standing && 'verdict' in spoken.standing && spoken.standing.verdict === 'empty'),
     backToWorkAt: row.backToWorkAt?.toISOString() ?? null,
   };
+}
+
+function photoChoice({ id, caption, roleName, uploadedAt }: PhotoView, place: number) {
+  const taken = uploadedAt.slice(0, 16).replace('T', ' ');
+  return { value: String(id), label: `${place + 1}: ${caption || `${roleName} photo`}, added ${taken}` };
 }
 
 export async function linkAction({ request, context, params }: Args, link: NotedLink) {

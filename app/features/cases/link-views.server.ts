@@ -26,6 +26,8 @@ export type EntryView = {
   byName: string;
   at: string;
   values: Record<string, string>;
+  /** The photo of the gauge, for a reading. */
+  photoId?: number | null;
 };
 
 /** All entries of a case with its notes and the versions of its links. */
@@ -71,7 +73,7 @@ function toLinksView(row: Case, evidence: Evidence, vocabulary: Vocabulary, circ
     })),
     repairs: evidence.repairs.map((repair) => repairView(repair, vocabulary)),
     proofs: evidence.proofs.map(proofView),
-    charges: evidence.charges.map(chargeView),
+    charges: evidence.charges.map((charge) => chargeView(charge, evidence.cylinders)),
     overrides: evidence.overrides.map(({ id, gate, lacks, reason, byName, at }) => ({
       id,
       gate,
@@ -103,7 +105,14 @@ function readingView(row: Evidence['readings'][number]): EntryView {
     tone: 'plain',
     headline: `${readingKind(row.kind)?.name ?? row.kind}: ${row.entered} ${unitLabel(row.unit)}`,
     lines: [],
-    values: { kind: row.kind, value: row.entered, unit: row.unit, note: row.note },
+    photoId: row.photoId,
+    values: {
+      kind: row.kind,
+      value: row.entered,
+      unit: row.unit,
+      note: row.note,
+      photo: row.photoId === null ? '' : String(row.photoId),
+    },
   };
 }
 
@@ -191,19 +200,24 @@ function proofView(row: Evidence['proofs'][number]): EntryView {
   };
 }
 
-function chargeView(row: Evidence['charges'][number]): EntryView {
+function chargeView(row: Evidence['charges'][number], cylinders: Evidence['cylinders']): EntryView {
+  const cylinder = cylinders.find(({ id }) => id === row.cylinderId);
   const amount = row.entered ? `: ${row.entered} ${unitLabel(row.unit)}` : '';
   return {
     ...signed(row, row.at),
     kind: 'charge',
     tone: 'plain',
     headline: `${CHARGE_KIND_NAMES[row.kind]}${amount} ${row.substance}`.trim(),
-    lines: [row.source && `From or into ${row.source}`].filter(Boolean),
+    lines: [
+      cylinder ? `${row.kind === 'recovered' ? 'Into' : 'From'} ${cylinder.label}, in the book` : '',
+      row.source && `From or into ${row.source}`,
+    ].filter(Boolean),
     values: {
       kind: row.kind,
       substance: row.substance,
       value: row.entered,
       unit: row.unit,
+      cylinder: row.cylinderId === null ? '' : String(row.cylinderId),
       source: row.source,
       note: row.note,
     },

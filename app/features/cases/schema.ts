@@ -97,6 +97,11 @@ export const ENTRY_SCHEMAS = {
     value: reading.value,
     unit: reading.unit,
     note: longText,
+    photo: z
+      .string()
+      .trim()
+      .regex(/^\d{0,9}$/, 'Choose a photo of this case.')
+      .optional(),
   }),
   method: z.object({
     methodId: z.string({ error: 'Choose a method.' }).min(1, 'Choose a method.').max(60),
@@ -146,6 +151,11 @@ export const ENTRY_SCHEMAS = {
       substance: shortText,
       value: charge.value,
       unit: charge.unit,
+      cylinder: z
+        .string()
+        .trim()
+        .regex(/^\d{0,9}$/, 'Choose a cylinder of the book.')
+        .optional(),
       source: shortText,
       note: longText,
     })

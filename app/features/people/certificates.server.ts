@@ -1,3 +1,4 @@
+import type { Transaction } from 'sequelize';
 import { z } from 'zod';
 import type { Actor } from '#app/domain/permissions/actor.ts';
 import { may } from '#app/domain/permissions/matrix.ts';
@@ -36,9 +37,11 @@ export async function listCertificates(
   shopId: number,
   userId: number,
   now: Date,
+  transaction?: Transaction,
 ): Promise<CertificateView[]> {
   const rows = await Certificate.findAll({
     where: { shopId, userId },
+    transaction,
     order: [
       ['expiresOn', 'ASC'],
       ['id', 'ASC'],
@@ -53,6 +56,16 @@ export async function listCertificates(
       state: left < 0 ? 'expired' : left < SOON_MS ? 'soon' : 'good',
     };
   });
+}
+
+/** The name of the certificate that a person works under at that time; empty when none is good. */
+export async function certificateOf(
+  { shopId, userId }: Actor,
+  now: Date,
+  transaction?: Transaction,
+): Promise<string> {
+  const certificates = await listCertificates(shopId, userId, now, transaction);
+  return certificates.find(({ state }) => state !== 'expired')?.name ?? '';
 }
 
 export async function addCertificate(

@@ -1,16 +1,21 @@
 import { stringify } from 'csv-stringify/sync';
 import { QueryTypes } from 'sequelize';
-import { annualizingRate, gramsLostPerYear, rollingAverageRate } from '#app/domain/leak-rate/leak-rate.ts';
 import type { Actor } from '#app/domain/permissions/actor.ts';
 import { may } from '#app/domain/permissions/matrix.ts';
+import { refrigerantNamed } from '#app/domain/refrigerant/saturation.ts';
 import {
   CYLINDER_KIND_NAMES,
   type CylinderKind,
+  cylinderAccount,
+  leakedBeyondPlate,
   MOVEMENT_KIND_NAMES,
   type MovementKind,
+  PLACE_NAMES,
+  PLACES,
+  placeOf,
 } from '#app/domain/refrigerant-book/book.ts';
 import { sequelize } from '#db/connection.server.ts';
-import { Cylinder, User } from '#db/models/index.ts';
+import { Cylinder, Movement, User } from '#db/models/index.ts';
 import type { BookInput } from './schema.ts';
 
 const PAGE_SIZE = 50;
@@ -25,6 +30,8 @@ export type MovementView = {
   grams: number;
   cylinderLabel: string;
   machineNumber: string;
+  circuitName: string;
+  weighedGrams: number | null;
   caseNumber: number | null;
   certificate: string;
   note: string;
@@ -49,7 +56,7 @@ function conditions(actor: Actor, { from, to, machine, person }: BookInput) {
 }
 
 const TABLES = `movements v LEFT JOIN cylinders y ON y.id = v.cylinderId LEFT JOIN machines m ON m.id = v.machineId
-  LEFT JOIN cases c ON c.id = v.caseId LEFT JOIN movements r ON r.reversesId = v.id`;
+  LEFT JOIN circuits k ON k.id = v.circuitId LEFT JOIN cases c ON c.id = v.caseId LEFT JOIN movements r ON r.reversesId = v.id`;
 
 /** The movements of a period, a machine or a person, newest first. */
 export async function listMovements(
@@ -66,7 +73,7 @@ export async function listMovements(
     },
   );
   const rows = await sequelize.query<Row>(
-    `SELECT v.id, v.at, v.kind, v.refrigerant, v.grams, COALESCE(y.label, '') AS cylinderLabel, COALESCE(m.number, '') AS machineNumber,
+    `SELECT v.id, v.at, v.kind, v.refrigerant, v.grams, v.weighedGrams, COALESCE(k.label, '') AS circuitName, COALESCE(y.label, '') AS cylinderLabel, COALESCE(m.number, '') AS machineNumber,
             c.number AS caseNumber, v.certificate, v.note, v.byName, v.reversesId AS reverses, r.id AS reversedBy
        FROM ${TABLES} WHERE ${sql} ORDER BY v.at DESC, v.id DESC LIMIT :limit OFFSET :offset`,
     { replacements: { ...values, limit, offset: (input.page - 1) * limit }, type: QueryTypes.SELECT },
@@ -84,44 +91,107 @@ export async function listMovements(
   };
 }
 
-/** Stock, and what went into and came out of each machine: what is missing there is the estimate of its leaks. */
+/** Stock, and where everything is that ever came in. */
 export async function loadStock(actor: Actor) {
-  const cylinders = await Cylinder.findAll({ where: { shopId: actor.shopId }, order: [['label', 'ASC']] });
-  const rows = await sequelize.query<{ account: string; held: number }>(
-    `SELECT account, SUM(grams) AS held FROM (
-       SELECT toAccount AS account, grams FROM movements WHERE shopId = :shopId
-       UNION ALL SELECT fromAccount, -grams FROM movements WHERE shopId = :shopId) both_sides GROUP BY account`,
-    { replacements: { shopId: actor.shopId }, type: QueryTypes.SELECT },
+  const { shopId } = actor;
+  const cylinders = await Cylinder.findAll({ where: { shopId }, order: [['label', 'ASC']] });
+  const rows = await sequelize.query<{ account: string; refrigerant: string; held: number }>(
+    `SELECT account, refrigerant, SUM(grams) AS held FROM (
+       SELECT toAccount AS account, refrigerant, grams FROM movements WHERE shopId = :shopId
+       UNION ALL SELECT fromAccount, refrigerant, -grams FROM movements WHERE shopId = :shopId) both_sides
+      GROUP BY account, refrigerant`,
+    { replacements: { shopId }, type: QueryTypes.SELECT },
   );
   const held = new Map(rows.map(({ account, held: grams }) => [account, Number(grams)]));
+  const opened = await Movement.findAll({ where: { shopId, kind: 'opened' }, attributes: ['cylinderId'] });
+  const isOpen = new Set(opened.map(({ cylinderId }) => cylinderId));
   return {
     cylinders: cylinders.map(({ id, label, refrigerant, kind }) => ({
       id,
       label,
       refrigerant,
       kindName: CYLINDER_KIND_NAMES[kind as CylinderKind],
-      grams: held.get(`cylinder:${id}`) ?? 0,
+      opened: isOpen.has(id),
+      grams: held.get(cylinderAccount(id)) ?? 0,
     })),
+    whereabouts: whereabouts(rows),
     /** Nothing when the book balances; otherwise by how much it does not. */
     outOfBalanceGrams: [...held.values()].reduce((sum, grams) => sum + grams, 0),
-    overdrawn: cylinders.filter(({ id }) => (held.get(`cylinder:${id}`) ?? 0) < 0).map(({ label }) => label),
+    overdrawn: cylinders
+      .filter(({ id }) => (held.get(cylinderAccount(id)) ?? 0) < 0)
+      .map(({ label }) => label),
+    outsideBook: await chargesOutsideBook(shopId),
   };
 }
 
-export async function loadMachineBalances(actor: Actor, input: BookInput) {
+/** The cylinders that go with a circuit, as choices with what they hold; all of them when its plate names no refrigerant. */
+export async function cylinderChoices(
+  actor: Actor,
+  plate: string,
+): Promise<{ value: string; label: string }[]> {
+  const wanted = refrigerantNamed(plate);
+  const { cylinders } = await loadStock(actor);
+  return cylinders
+    .filter(({ refrigerant }) => wanted === null || refrigerant === wanted)
+    .map(({ id, label, refrigerant, grams }) => ({
+      value: String(id),
+      label: `${label}, ${refrigerant}, holds ${grams.toLocaleString('en-GB')} g`,
+    }));
+}
+
+/** For each refrigerant, the grams at each kind of place; suppliers count as what came from them. */
+function whereabouts(rows: readonly { account: string; refrigerant: string; held: number }[]) {
+  const refrigerants = [...new Set(rows.map(({ refrigerant }) => refrigerant))].sort();
+  return refrigerants.map((refrigerant) => ({
+    refrigerant,
+    places: PLACES.map((place) => {
+      const grams = rows
+        .filter((row) => row.refrigerant === refrigerant && placeOf(row.account) === place)
+        .reduce((sum, row) => sum + Number(row.held), 0);
+      return { place, name: PLACE_NAMES[place], grams: place === 'supplier' ? -grams : grams };
+    }),
+  }));
+}
+
+/** Refrigerant that cases say went in or out but that no cylinder of the book stands for, since the book was begun. */
+async function chargesOutsideBook(shopId: number): Promise<{ count: number; cases: number[] }> {
+  const rows = await sequelize.query<{ number: number; entries: number }>(
+    `SELECT c.number, COUNT(*) AS entries FROM charges g JOIN cases c ON c.id = g.caseId
+      WHERE g.shopId = :shopId AND c.medium = 'refrigerant' AND g.kind IN ('charged', 'recovered') AND g.amountSi > 0
+        AND g.cylinderId IS NULL AND g.at >= (SELECT MIN(at) FROM movements WHERE shopId = :shopId)
+      GROUP BY c.number ORDER BY c.number DESC`,
+    { replacements: { shopId }, type: QueryTypes.SELECT },
+  );
+  return {
+    count: rows.reduce((sum, { entries }) => sum + Number(entries), 0),
+    cases: rows.slice(0, 20).map(({ number }) => number),
+  };
+}
+
+/** What went into and came out of each circuit over the period; what stays beyond its plate has leaked. */
+export async function loadCircuitBalances(actor: Actor, input: BookInput) {
   const { sql, values } = conditions(actor, input);
-  const rows = await sequelize.query<{ number: string; charged: number; recovered: number }>(
-    `SELECT m.number,
+  const rows = await sequelize.query<{
+    number: string;
+    circuit: string;
+    plate: number | null;
+    charged: number;
+    recovered: number;
+  }>(
+    `SELECT m.number, k.label AS circuit, k.plateChargeGrams AS plate,
             SUM(IF(v.kind = 'charged', IF(v.reversesId IS NULL, v.grams, -v.grams), 0)) AS charged,
             SUM(IF(v.kind = 'recovered', IF(v.reversesId IS NULL, v.grams, -v.grams), 0)) AS recovered
-       FROM movements v JOIN machines m ON m.id = v.machineId
-      WHERE ${sql} GROUP BY m.id, m.number ORDER BY SUM(v.grams) DESC, m.number LIMIT 200`,
+       FROM movements v JOIN circuits k ON k.id = v.circuitId JOIN machines m ON m.id = k.machineId
+      WHERE ${sql} GROUP BY k.id, m.number, k.label, k.plateChargeGrams ORDER BY SUM(v.grams) DESC, m.number LIMIT 200`,
     { replacements: values, type: QueryTypes.SELECT },
   );
-  return rows.map(({ number, charged, recovered }) => ({
+  return rows.map(({ number, circuit, plate, charged, recovered }) => ({
     number,
+    circuit,
     charged: Number(charged),
     recovered: Number(recovered),
+    plateGrams: plate === null ? null : Number(plate),
+    leakedGrams: leakedBeyondPlate(Number(charged), Number(recovered), plate === null ? null : Number(plate)),
   }));
 }
 
@@ -133,7 +203,7 @@ export async function loadBookPage(actor: Actor, input: BookInput) {
   return {
     ...(await loadStock(actor)),
     ...(await listMovements(actor, input)),
-    machines: await loadMachineBalances(actor, input),
+    circuits: await loadCircuitBalances(actor, input),
     people: people.map(({ id, name }) => ({ id, name })),
     may: { write: may(actor.role, 'book:write'), reverse: may(actor.role, 'book:reverse') },
   };
@@ -157,8 +227,10 @@ export async function exportBook(actor: Actor, input: BookInput): Promise<string
         'kind',
         'refrigerant',
         'grams',
+        'weighedGrams',
         'cylinderLabel',
         'machineNumber',
+        'circuitName',
         'caseNumber',
         'certificate',
         'byName',
@@ -168,68 +240,4 @@ export async function exportBook(actor: Actor, input: BookInput): Promise<string
       ],
     },
   );
-}
-
-const DAY_MS = 24 * 60 * 60_000;
-
-export type LeakEstimate = {
-  /** Per cent a year of the plate by the two methods, from the newest addition and from the year's. */
-  annualizing: number | null;
-  rolling: number | null;
-  gramsPerYear: number | null;
-  /** Additions that no repair of the machine came before since the addition before them. */
-  toppedUp: { grams: number; at: string }[];
-};
-
-/** What a machine's additions say of its leaks; a first fill after a recovery is no addition but a refill. */
-export async function loadLeakEstimate(
-  actor: Actor,
-  machineId: number,
-  plateGrams: number | null,
-  now: Date,
-): Promise<LeakEstimate | null> {
-  const rows = await sequelize.query<{ grams: number; at: Date; kind: 'charged' | 'recovered' }>(
-    `SELECT v.grams, v.at, v.kind FROM movements v LEFT JOIN movements r ON r.reversesId = v.id
-      WHERE v.shopId = :shopId AND v.machineId = :machineId AND v.kind IN ('charged', 'recovered') AND v.reversesId IS NULL AND r.id IS NULL
-      ORDER BY v.at, v.id`,
-    { replacements: { shopId: actor.shopId, machineId }, type: QueryTypes.SELECT },
-  );
-  const repairs = await sequelize.query<{ at: Date }>(
-    'SELECT a.at FROM repair_actions a JOIN cases c ON c.id = a.caseId WHERE c.machineId = :machineId ORDER BY a.at',
-    { replacements: { machineId }, type: QueryTypes.SELECT },
-  );
-  const additions: { grams: number; at: Date; days: number | null; repaired: boolean }[] = [];
-  let recovered = 0;
-  let before: Date | null = null;
-  for (const { grams, at, kind } of rows) {
-    if (kind === 'recovered') {
-      recovered += grams;
-      continue;
-    }
-    const since = before;
-    const added = Math.max(grams - recovered, 0);
-    const repaired = repairs.some((repair) => repair.at <= at && (since === null || repair.at > since));
-    if (added > 0)
-      additions.push({
-        grams: added,
-        at,
-        days: since ? (at.getTime() - since.getTime()) / DAY_MS : null,
-        repaired,
-      });
-    recovered = 0;
-    before = at;
-  }
-  const newest = additions.at(-1);
-  if (!newest) return null;
-  const year = additions
-    .filter(({ at, days }) => days !== null && now.getTime() - at.getTime() <= 365 * DAY_MS)
-    .map(({ grams }) => grams);
-  return {
-    annualizing: plateGrams && newest.days ? annualizingRate(newest.grams, plateGrams, newest.days) : null,
-    rolling: plateGrams ? rollingAverageRate(year, plateGrams) : null,
-    gramsPerYear: newest.days ? gramsLostPerYear(newest.grams, newest.days) : null,
-    toppedUp: additions
-      .filter(({ repaired, days }) => !repaired && days !== null)
-      .map(({ grams, at }) => ({ grams, at: at.toISOString() })),
-  };
 }

@@ -1,6 +1,11 @@
 import { z } from 'zod';
 import { REFRIGERANTS } from '#app/domain/refrigerant/saturation.ts';
-import { CYLINDER_KINDS, MOVEMENT_KINDS, NEEDS_MACHINE } from '#app/domain/refrigerant-book/book.ts';
+import {
+  CYLINDER_KINDS,
+  MOVEMENT_KINDS,
+  type MovementKind,
+  NEEDS_MACHINE,
+} from '#app/domain/refrigerant-book/book.ts';
 import { isUnit, parseTypedNumber, toSi, UNITS } from '#app/domain/units/units.ts';
 
 const MOST_GRAMS = 1_000_000;
@@ -19,17 +24,13 @@ export const movementSchema = z
   .object({
     kind: z.enum(MOVEMENT_KINDS, { error: 'Say what happened.' }),
     cylinder: z.coerce.number({ error: 'Choose the cylinder.' }).int().positive('Choose the cylinder.'),
-    amount: z
-      .string({ error: 'Write the weight.' })
-      .trim()
-      .refine((typed) => (parseTypedNumber(typed) ?? 0) > 0, 'Write the weight as a number above nothing.'),
-    unit: z.string().refine((unit) => isUnit(unit) && UNITS[unit].quantity === 'mass', 'Choose a unit.'),
-    machine: z.string().trim().max(60).default(''),
-    caseNumber: z
+    amount: z.string().trim().max(40, 'This is too long for a number.').default(''),
+    unit: z
       .string()
-      .trim()
-      .regex(/^\d{0,9}$/, 'Write the case’s number.')
-      .default(''),
+      .default('g')
+      .refine((unit) => isUnit(unit) && UNITS[unit].quantity === 'mass', 'Choose a unit.'),
+    machine: z.string().trim().max(60).default(''),
+    circuit: z.string().trim().max(190).default(''),
     certificate: z.string().trim().max(190, 'Use at most 190 characters.').default(''),
     note: z.string().trim().max(5000, 'Use at most 5,000 characters.').default(''),
   })
@@ -37,11 +38,21 @@ export const movementSchema = z
     path: ['machine'],
     message: 'Which machine? Write its number.',
   })
-  .refine(({ amount, unit }) => gramsOf(amount, unit) >= 1 && gramsOf(amount, unit) <= MOST_GRAMS, {
+  .refine(({ kind, amount }) => kind === 'opened' || parseTypedNumber(amount) !== null, {
+    path: ['amount'],
+    message: 'Write the weight as a number.',
+  })
+  .refine(({ kind, amount, unit }) => withinWeights(kind, gramsOf(amount, unit)), {
     path: ['amount'],
     message: 'Use 1 g to 1,000 kg.',
   });
 export type MovementInput = z.infer<typeof movementSchema>;
+
+/** An empty cylinder weighs nothing; an opening has no weight. */
+function withinWeights(kind: MovementKind, grams: number): boolean {
+  if (kind === 'opened') return true;
+  return grams >= (kind === 'weighed' ? 0 : 1) && grams <= MOST_GRAMS;
+}
 
 /** Whole grams of a typed weight. */
 export function gramsOf(typed: string, unit: string): number {

@@ -14,6 +14,8 @@ import { listMachineChoices, loadCaseHead, loadTalk } from '#app/features/cases/
 import { alikeCases } from '#app/features/find/alike.server.ts';
 import { AlikeList } from '#app/features/find/components/alike-list.tsx';
 import { listCasePhotos } from '#app/features/photos/queries.server.ts';
+import { ToppedUp } from '#app/features/refrigerant-book/components/topped-up.tsx';
+import { loadLeakEstimates } from '#app/features/refrigerant-book/leak-estimates.server.ts';
 import { readForm } from '#app/server/forms.server.ts';
 import { orRefuse, requireActor, wholeParam } from '#app/server/guards.server.ts';
 import type { Route } from './+types/overview.ts';
@@ -24,10 +26,11 @@ export async function loader({ context, params }: Route.LoaderArgs) {
   const viewer = requireActor(context);
   const number = wholeParam(params.number);
   const head = await orRefuse(loadCaseHead(viewer, number));
-  const { view } = await loadLinks(viewer, number);
+  const { view, row } = await loadLinks(viewer, number);
   return {
     head,
     complaint: view.complaint,
+    toppedUp: (await loadLeakEstimates({ id: row.circuitId }, new Date()))[0]?.toppedUp ?? [],
     findings: view.findings,
     charges: view.charges,
     proofs: view.proofs,
@@ -59,6 +62,7 @@ export default function Overview({ loaderData, actionData }: Route.ComponentProp
   return (
     <div className="grid gap-x-10 gap-y-8 xl:grid-cols-[minmax(0,1fr)_21rem]">
       <div className="min-w-0 space-y-8">
+        <ToppedUp toppedUp={loaderData.toppedUp} />
         <Panel title="What the operator said">
           {complaint.text ? (
             <blockquote className="max-w-prose text-lg break-words whitespace-pre-line">

@@ -28,6 +28,7 @@ export default function Readings({ loaderData, actionData }: Route.ComponentProp
           editing={editing}
           mayEdit={mayEdit}
           empty="No reading yet."
+          photos={photos.photos}
           {...shared}
         />
         {mayEdit && (

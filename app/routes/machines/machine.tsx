@@ -3,14 +3,15 @@ import { PhotoStrip } from '#app/components/photos/photo-strip.tsx';
 import { CaseStateBadge } from '#app/components/ui/badge.tsx';
 import { ButtonLink } from '#app/components/ui/button.tsx';
 import { EmptyState } from '#app/components/ui/empty-state.tsx';
-import { Notice } from '#app/components/ui/notice.tsx';
 import { PageHeader } from '#app/components/ui/page-header.tsx';
 import { Facts, Panel } from '#app/components/ui/panel.tsx';
 import { Day } from '#app/components/ui/time.tsx';
+import type { LeakEstimate } from '#app/domain/leak-rate/leak-history.ts';
 import { may } from '#app/domain/permissions/matrix.ts';
 import { loadMachine } from '#app/features/machines/queries.server.ts';
 import { listCircuitPhotos } from '#app/features/photos/queries.server.ts';
-import { loadLeakEstimate } from '#app/features/refrigerant-book/queries.server.ts';
+import { ToppedUp } from '#app/features/refrigerant-book/components/topped-up.tsx';
+import { loadLeakEstimates } from '#app/features/refrigerant-book/leak-estimates.server.ts';
 import { orRefuse, requireActor, wholeParam } from '#app/server/guards.server.ts';
 import type { Route } from './+types/machine.ts';
 
@@ -30,12 +31,7 @@ export async function loader({ context, params }: Route.LoaderArgs) {
         photos: photos[place]?.photos ?? [],
       })),
     },
-    leaks: await loadLeakEstimate(
-      viewer,
-      machine.id,
-      machine.circuits.find(({ plateGrams }) => plateGrams !== null)?.plateGrams ?? null,
-      new Date(),
-    ),
+    leaks: await loadLeakEstimates({ machineId: machine.id }, new Date()),
     mayEdit: may(viewer.role, 'machine:edit'),
     mayOpen: may(viewer.role, 'case:open'),
   };
@@ -112,44 +108,20 @@ export default function Machine({ loaderData: { machine, leaks, mayEdit, mayOpen
           ))}
         </ul>
       </Panel>
-      {leaks && (
+      {leaks.length > 0 && (
         <Panel
           title="What had to be added"
           lead="From the refrigerant book. Per cent a year by the methods of 40 CFR 82.152, which cab circuits do not fall under; local law comes first."
         >
-          {leaks.toppedUp.length > 0 && (
-            <Notice tone="warn" title="Topped up without a repair">
-              <ul className="list-disc pl-5">
-                {leaks.toppedUp.map(({ grams, at }) => (
-                  <li key={at}>
-                    {grams.toLocaleString('en-GB')} g on <Day value={at} />
-                  </li>
-                ))}
-              </ul>
-            </Notice>
-          )}
-          <div className="mt-4">
-            <Facts
-              columns={3}
-              facts={[
-                {
-                  label: 'Lost, by the newest addition',
-                  value:
-                    leaks.gramsPerYear === null
-                      ? ''
-                      : `about ${Math.round(leaks.gramsPerYear).toLocaleString('en-GB')} g a year`,
-                },
-                {
-                  label: 'Annualizing method',
-                  value: leaks.annualizing === null ? '' : `${leaks.annualizing.toFixed(1)} % a year`,
-                },
-                {
-                  label: 'Rolling average',
-                  value: leaks.rolling === null ? '' : `${leaks.rolling.toFixed(1)} % a year`,
-                },
-              ]}
-            />
-          </div>
+          <ul className="space-y-6">
+            {leaks.map((leak) => (
+              <li key={leak.circuitId} className="space-y-4">
+                <h3 className="font-semibold">{leak.circuitName}</h3>
+                <ToppedUp toppedUp={leak.toppedUp} />
+                <Facts columns={3} facts={leakFacts(leak)} />
+              </li>
+            ))}
+          </ul>
         </Panel>
       )}
       <Panel title="Cases on this machine">
@@ -178,4 +150,17 @@ export default function Machine({ loaderData: { machine, leaks, mayEdit, mayOpen
       </Panel>
     </div>
   );
+}
+
+function leakFacts({ gramsPerYear, annualizing, rolling }: LeakEstimate) {
+  const percent = (rate: number | null) => (rate === null ? '' : `${rate.toFixed(1)} % a year`);
+  return [
+    {
+      label: 'Lost, by the newest addition',
+      value:
+        gramsPerYear === null ? '' : `about ${Math.round(gramsPerYear).toLocaleString('en-GB')} g a year`,
+    },
+    { label: 'Annualizing method', value: percent(annualizing) },
+    { label: 'Rolling average', value: percent(rolling) },
+  ];
 }

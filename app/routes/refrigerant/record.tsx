@@ -1,6 +1,7 @@
 import { ButtonLink } from '#app/components/ui/button.tsx';
 import { PrintButton } from '#app/components/ui/print-button.tsx';
 import { Day } from '#app/components/ui/time.tsx';
+import { CircuitBalances } from '#app/features/refrigerant-book/components/circuit-balances.tsx';
 import { DateFilter } from '#app/features/refrigerant-book/components/date-filter.tsx';
 import { MovementTable } from '#app/features/refrigerant-book/components/movement-table.tsx';
 import { listMovements, loadBookPage } from '#app/features/refrigerant-book/queries.server.ts';
@@ -15,10 +16,10 @@ export const meta: Route.MetaFunction = () => [{ title: 'Refrigerant record · W
 export async function loader({ context, url }: Route.LoaderArgs) {
   const viewer = requireActor(context);
   const input = { ...parseBook(url.searchParams), page: 1 };
-  const { machines, cylinders, people } = await loadBookPage(viewer, input);
+  const { circuits, cylinders, people } = await loadBookPage(viewer, input);
   return {
     input,
-    machines,
+    circuits,
     cylinders,
     people,
     shopName: viewer.shopName,
@@ -27,7 +28,7 @@ export async function loader({ context, url }: Route.LoaderArgs) {
 }
 
 export default function Record({
-  loaderData: { input, movements, total, machines, cylinders, people, shopName },
+  loaderData: { input, movements, total, circuits, cylinders, people, shopName },
 }: Route.ComponentProps) {
   return (
     <article className="space-y-6">
@@ -56,14 +57,8 @@ export default function Record({
         </ul>
       </section>
       <section>
-        <h2 className="mb-2 text-lg font-semibold">By machine</h2>
-        <ul className="figures">
-          {machines.map(({ number, charged, recovered }) => (
-            <li key={number}>
-              {number}: {charged.toLocaleString('en-GB')} g in, {recovered.toLocaleString('en-GB')} g out
-            </li>
-          ))}
-        </ul>
+        <h2 className="mb-2 text-lg font-semibold">By circuit</h2>
+        <CircuitBalances circuits={circuits} />
       </section>
       <p className="text-sm text-muted">
         Kept by the shop; local law says what an inspector needs beside it.

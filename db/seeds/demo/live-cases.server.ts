@@ -8,7 +8,8 @@ import type { EntryInput, EntryKind, OpenCaseInput } from '#app/features/cases/s
 import { openCaseSchema } from '#app/features/cases/schema.ts';
 import type { Outcome } from '#app/features/outcome.ts';
 import { saveWriteUp, sendBackWriteUp, submitWriteUp } from '#app/features/write-ups/commands.server.ts';
-import { seedBook, talkOnImported } from './live-talk.server.ts';
+import { seedCylinders, weighCylinders } from './live-book.server.ts';
+import { talkOnImported } from './live-talk.server.ts';
 import { type DemoPhoto, GAUGES, PAIRS } from './photos.ts';
 
 export type Crew = { rhedyn: Actor; jesk: Actor; tamsel: Actor; ottolie: Actor };
@@ -49,6 +50,8 @@ export async function seedLiveCases(crew: Crew, now: Date): Promise<PlacedPhoto[
   const place = (actor: Actor, number: number, link: LinkKey, hours: number, shown: readonly DemoPhoto[]) => {
     for (const photo of shown) photos.push({ number, actor, link, photo, takenAt: hoursAgo(hours) });
   };
+
+  const cylinders = await seedCylinders(crew, hoursAgo);
 
   const fresh = await open(rhedyn, 2, {
     machine: 'T05',
@@ -271,7 +274,8 @@ export async function seedLiveCases(crew: Crew, now: Date): Promise<PlacedPhoto[
     substance: 'R-134a',
     value: '540',
     unit: 'g',
-    source: 'recovery cylinder 2',
+    cylinder: String(cylinders.recovery),
+    source: '',
     note: '',
   });
   await add(rhedyn, running, 244, 'charge', {
@@ -279,7 +283,8 @@ export async function seedLiveCases(crew: Crew, now: Date): Promise<PlacedPhoto[
     substance: 'R-134a',
     value: '1150',
     unit: 'g',
-    source: 'cylinder 5',
+    cylinder: String(cylinders.full),
+    source: '',
     note: 'By weight, plate says the same.',
   });
   place(rhedyn, running, 'charge', 244, [GAUGES.running]);
@@ -336,7 +341,7 @@ export async function seedLiveCases(crew: Crew, now: Date): Promise<PlacedPhoto[
       hoursAgo(390),
     ),
   );
-  await seedBook(crew, running, hoursAgo);
+  await weighCylinders(crew, cylinders.full, hoursAgo);
   await talkOnImported(crew, hoursAgo, ottolie);
   return photos;
 }

@@ -1,66 +1,13 @@
 import type { Actor } from '#app/domain/permissions/actor.ts';
 import { addComment, saySameOnMine } from '#app/features/cases/commands.server.ts';
-import { addCylinder, addMovement, reverseMovement } from '#app/features/refrigerant-book/commands.server.ts';
-import { movementSchema } from '#app/features/refrigerant-book/schema.ts';
 import {
   answerFlag,
   flagWriteUp,
   publishWriteUp,
   withdrawWriteUp,
 } from '#app/features/write-ups/commands.server.ts';
-import { Case, Movement, WriteUpFlag } from '#db/models/index.ts';
+import { Case, WriteUpFlag } from '#db/models/index.ts';
 import { accepted, type Crew } from './live-cases.server.ts';
-
-/** A few cylinders and what moved between them and the machines. */
-export async function seedBook(
-  { rhedyn, ottolie }: Crew,
-  number: number,
-  hoursAgo: (hours: number) => Date,
-): Promise<void> {
-  const cylinder = async (label: string, kind: 'new' | 'recovery' | 'can') =>
-    accepted(await addCylinder(ottolie, { label, refrigerant: 'R-134a', kind }, hoursAgo(2000))).id;
-  const move = async (actor: Actor, hours: number, fields: Record<string, unknown>) =>
-    accepted(await addMovement(actor, movementSchema.parse({ unit: 'g', ...fields }), hoursAgo(hours)));
-  const [five, two] = [await cylinder('Cylinder 5', 'new'), await cylinder('Recovery 2', 'recovery')];
-  await cylinder('Can box A', 'can');
-  await move(ottolie, 1990, {
-    kind: 'bought',
-    cylinder: five,
-    amount: '13.6',
-    unit: 'kg',
-    note: 'Full, tare checked.',
-  });
-  const certificate = 'shop certificate 14';
-  await move(rhedyn, 245, {
-    kind: 'recovered',
-    cylinder: two,
-    amount: '540',
-    machine: 'W04',
-    caseNumber: String(number),
-    certificate,
-  });
-  await move(rhedyn, 244, {
-    kind: 'charged',
-    cylinder: five,
-    amount: '1510',
-    machine: 'W04',
-    caseNumber: String(number),
-    certificate,
-  });
-  const wrong = await Movement.findOne({
-    where: { shopId: rhedyn.shopId, grams: 1510 },
-    rejectOnEmpty: true,
-  });
-  accepted(await reverseMovement(ottolie, wrong.id, 'Digits turned round on the sheet.', hoursAgo(200)));
-  await move(rhedyn, 199, {
-    kind: 'charged',
-    cylinder: five,
-    amount: '1150',
-    machine: 'W04',
-    caseNumber: String(number),
-    certificate,
-  });
-}
 
 /** Comments, flags, a revision and a withdrawal on cases that came in with the import. */
 export async function talkOnImported(

@@ -3,6 +3,7 @@ import { Form, Link, useNavigation } from 'react-router';
 import { Button, ButtonLink } from '#app/components/ui/button.tsx';
 import { DateTime } from '#app/components/ui/time.tsx';
 import { versionToSend } from '#app/features/outcome.ts';
+import type { PhotoView } from '#app/features/photos/views.ts';
 import type { LinkChoices } from '../choices.ts';
 import type { LinkActionData } from '../link-action.server.ts';
 import type { EntryView } from '../link-views.server.ts';
@@ -19,10 +20,17 @@ type Shared = {
   mayOverride?: boolean;
 };
 
-type ListProps = Shared & { entries: EntryView[]; editing: number | null; mayEdit: boolean; empty: string };
+type ListProps = Shared & {
+  entries: EntryView[];
+  editing: number | null;
+  mayEdit: boolean;
+  empty: string;
+  /** Among them the photos that entries show, such as a reading’s gauge. */
+  photos?: readonly PhotoView[];
+};
 
 /** The entries of one kind, each with its own way to be changed or removed. */
-export function EntryList({ entries, editing, mayEdit, empty, ...shared }: ListProps) {
+export function EntryList({ entries, editing, mayEdit, empty, photos = [], ...shared }: ListProps) {
   if (entries.length === 0) return <p className="text-muted">{empty}</p>;
   return (
     <ul className="space-y-4">
@@ -36,7 +44,11 @@ export function EntryList({ entries, editing, mayEdit, empty, ...shared }: ListP
           {editing === entry.id && mayEdit ? (
             <ChangeEntry entry={entry} {...shared} />
           ) : (
-            <ShownEntry entry={entry} mayEdit={mayEdit} />
+            <ShownEntry
+              entry={entry}
+              photo={photos.find(({ id }) => id === entry.photoId)}
+              mayEdit={mayEdit}
+            />
           )}
         </li>
       ))}
@@ -44,10 +56,24 @@ export function EntryList({ entries, editing, mayEdit, empty, ...shared }: ListP
   );
 }
 
-function ShownEntry({ entry, mayEdit }: { entry: EntryView; mayEdit: boolean }) {
+type ShownProps = { entry: EntryView; photo: PhotoView | undefined; mayEdit: boolean };
+
+function ShownEntry({ entry, photo, mayEdit }: ShownProps) {
   return (
-    <div className="flex items-start justify-between gap-3">
-      <div className="min-w-0">
+    <div className="flex items-start gap-3">
+      {photo && (
+        <a href={photo.medium} className="shrink-0">
+          <img
+            src={photo.thumb}
+            alt={photo.caption || `The gauge at ${entry.headline}`}
+            width={photo.width}
+            height={photo.height}
+            loading="lazy"
+            className="size-20 rounded-lg border border-line object-cover"
+          />
+        </a>
+      )}
+      <div className="min-w-0 flex-1">
         <p className="figures text-lg font-semibold break-words">{entry.headline}</p>
         {entry.lines.map((line) => (
           <p key={line} className="break-words">

@@ -77,6 +77,16 @@ function ReadingFields({ choices, values, errors }: FieldsProps) {
         error={errors.note}
         hint="Engine speed, door open, which gauge."
       />
+      {choices.photos.length > 0 && (
+        <SelectField
+          name="photo"
+          label="Photo of the gauge"
+          blank="None"
+          options={choices.photos}
+          defaultValue={values.photo}
+          error={errors.photo}
+        />
+      )}
     </>
   );
 }
@@ -310,9 +320,20 @@ function ChargeFields({ choices, values, errors }: FieldsProps) {
         error={errors.substance}
         hint="Refrigerant, oil or fluid, as the container says."
       />
+      {choices.cylinders.length > 0 && (
+        <SelectField
+          name="cylinder"
+          label="From or into which cylinder or can"
+          hint="Then it enters the refrigerant book by itself."
+          blank="None of the book"
+          options={choices.cylinders}
+          defaultValue={values.cylinder}
+          error={errors.cylinder}
+        />
+      )}
       <TextField
         name="source"
-        label="From or into which cylinder or can"
+        label={choices.cylinders.length > 0 ? 'Another container' : 'From or into which container'}
         optional
         defaultValue={values.source}
         error={errors.source}
