@@ -2,7 +2,11 @@ import { beforeEach, describe, expect, test } from 'vitest';
 import { addEntry, changeEntry } from '#app/features/cases/entries.server.ts';
 import { addHoldTest, type HoldTestInput, listHoldTests } from '#app/features/cases/hold-tests.server.ts';
 import { loadLinks } from '#app/features/cases/link-views.server.ts';
-import { addPressureTest, pressureTestSchema } from '#app/features/cases/pressure-tests.server.ts';
+import {
+  addPressureTest,
+  gaugeTestSchema,
+  ramTestSchema,
+} from '#app/features/cases/pressure-tests.server.ts';
 import { loadCaseHead } from '#app/features/cases/queries.server.ts';
 import { readingsSpeak } from '#app/features/cases/readings-speak.server.ts';
 import { Forbidden } from '#app/features/outcome.ts';
@@ -180,19 +184,105 @@ describe('a pressure test with dry nitrogen', () => {
     ['130', '27', 'not-tight'],
     ['160', '27', 'cannot-tell'],
   ])('that ends at %s psi and %s °C: %s', async (endPressure, endC, verdict) => {
-    const input = pressureTestSchema.parse({
+    const input = gaugeTestSchema.parse({
       startPressure: '150',
       endPressure,
       pressureUnit: 'psi',
       pressureStep: '1',
-      startC: '38',
-      endC,
+      startTemperature: '38',
+      endTemperature: endC,
       pressureMinutes: '30',
     });
     expect((await addPressureTest({ actor: shop.tech, number, input })).ok).toBe(true);
     expect((await loadLinks(shop.tech, number)).view.proofs).toMatchObject([{ values: { verdict } }]);
   });
 });
+
+describe('pressure tests of other media', () => {
+  const onMedium = async (medium: string) => {
+    await Circuit.update({ medium }, { where: { shopId: shop.shop.id } });
+    await Case.update({ medium }, { where: { shopId: shop.shop.id } });
+  };
+  const gauge = (fields: Record<string, string>) =>
+    gaugeTestSchema.parse({
+      startPressure: '1,03',
+      endPressure: '1.03',
+      pressureUnit: 'bar',
+      pressureStep: '0.01',
+      startTemperature: '68',
+      startTemperatureUnit: 'F',
+      endTemperature: '20',
+      pressureMinutes: '15',
+      ...fields,
+    });
+  const ram = ramTestSchema.parse({
+    bore: '100',
+    rod: '0',
+    column: '800',
+    drift: '12',
+    driftStep: '1',
+    lengthUnit: 'mm',
+    startTemperature: '50',
+    endTemperature: '40',
+    pressureMinutes: '10',
+  });
+  const record = (input: Parameters<typeof addPressureTest>[0]['input']) =>
+    addPressureTest({ actor: shop.tech, number, input });
+  const proof = async () => (await loadLinks(shop.tech, number)).view.proofs.at(-1);
+
+  test('coolant: what was typed stays, 68 °F and 20 °C are one temperature', async () => {
+    await onMedium('coolant');
+    expect((await record(gauge({}))).ok).toBe(true);
+    expect(await proof()).toMatchObject({
+      values: { verdict: 'tight', start: '1,03', end: '1.03', unit: 'bar' },
+    });
+    await record(gauge({ endTemperature: '60', endPressure: '1.3' }));
+    expect(await proof()).toMatchObject({
+      values: { verdict: 'cannot-tell' },
+      note: expect.stringContaining('did not keep its temperature'),
+    });
+  });
+
+  test('air: the loss as free air', async () => {
+    await onMedium('compressed-air');
+    await record(gauge({ startPressure: '8', endPressure: '7', litres: '40', pressureMinutes: '5' }));
+    /** 40 l losing 1 bar in 5 minutes: 8 l·bar a minute, 7.9 l of free air. */
+    expect(await proof()).toMatchObject({
+      values: { verdict: 'not-tight' },
+      note: expect.stringContaining('about 7.9 litres of free air'),
+    });
+  });
+
+  test('a ram: what the cooling oil explains is taken out', async () => {
+    await onMedium('hydraulic-oil');
+    expect((await record(ram)).ok).toBe(true);
+    /** 12 mm less 5.6 mm over 10 minutes on 78.54 cm²: 5.0 ml a minute. */
+    expect(await proof()).toMatchObject({
+      values: { verdict: 'not-tight' },
+      note: expect.stringContaining('5 ml a minute past a valve'),
+    });
+  });
+
+  test('a medium is not proved in another’s way', async () => {
+    expect(await record(ram)).toMatchObject({ ok: false, fields: { '': expect.any(String) } });
+    await onMedium('gear-oil');
+    expect((await record(gauge({}))).ok).toBe(false);
+  });
+
+  test.each([
+    [{ rod: '100' }, 'rod'],
+    [{ bore: 'x' }, 'bore'],
+    [{ drift: '-1' }, 'drift'],
+    [{ lengthUnit: 'psi' }, 'lengthUnit'],
+  ])('a ram with %j is refused', (fields, name) => {
+    const parsed = ramTestSchema.safeParse({ ...ram, ...textOf(ram), ...fields });
+    expect(parsed.success ? [] : parsed.error.issues.map(({ path }) => path[0])).toContain(name);
+  });
+});
+
+function textOf(fields: Record<string, unknown>): Record<string, string> {
+  return Object.fromEntries(Object.entries(fields).map(([name, value]) => [name, String(value)]));
+}
 
 describe('readings speak', () => {
   test('at the altitude of the yard', async () => {

@@ -255,23 +255,3 @@ function finer({ resolutionPa }: HoldTest): string {
     ? 'A vacuum gauge in microns, dry nitrogen under pressure, or a detector would see much smaller leaks.'
     : 'A longer hold, dry nitrogen under pressure, a detector or dye would see smaller leaks.';
 }
-
-export type PressureTest = {
-  startPa: number;
-  endPa: number;
-  startC: number;
-  endC: number;
-  resolutionPa: number;
-};
-
-/**
- * A test with dry nitrogen: the fall that is left after the gas law is taken out (p/T constant at constant volume).
- * Pressures are absolute.
- */
-export function analysePressureTest({ startPa, endPa, startC, endC, resolutionPa }: PressureTest) {
-  const expectedPa = (startPa * (endC + ZERO_C)) / (startC + ZERO_C);
-  const lostPa = expectedPa - endPa;
-  const verdict: 'tight' | 'leak' | 'cannot-tell' =
-    lostPa > 2 * resolutionPa ? 'leak' : lostPa < -2 * resolutionPa ? 'cannot-tell' : 'tight';
-  return { verdict, expectedPa, lostPa };
-}

@@ -3,7 +3,7 @@
  * the conventional inch of mercury). Pressures keep the reference of their gauge: psi, bar and kPa read against the
  * air outside, inches of mercury are vacuum below it (negative), microns are absolute.
  */
-export type Quantity = 'pressure' | 'temperature' | 'mass' | 'volume' | 'time' | 'flow';
+export type Quantity = 'pressure' | 'temperature' | 'mass' | 'volume' | 'length';
 
 type Unit = {
   label: string;
@@ -35,6 +35,10 @@ export const UNITS = {
   l: { label: 'l', quantity: 'volume', factor: 1e-3 },
   floz: { label: 'US fl oz', quantity: 'volume', factor: 29.5735295625e-6 },
   gal: { label: 'US gal', quantity: 'volume', factor: 3.785411784e-3 },
+  m: { label: 'm', quantity: 'length', factor: 1 },
+  ft: { label: 'ft', quantity: 'length', factor: 0.3048 },
+  mm: { label: 'mm', quantity: 'length', factor: 0.001 },
+  in: { label: 'in', quantity: 'length', factor: 0.0254 },
 } as const satisfies Record<string, Unit>;
 
 export type UnitId = keyof typeof UNITS;
@@ -51,13 +55,13 @@ export function unitLabel(unit: string): string {
   return isUnit(unit) ? UNITS[unit].label : unit;
 }
 
-/** A value in `unit` as SI: Pa (in the unit's own reference), K, kg or m³. */
+/** A value in `unit` as SI: Pa (in the unit's own reference), K, kg, m³ or m. */
 export function toSi(value: number, unit: UnitId): number {
   const { factor, offset = 0 } = UNITS[unit] as Unit;
   return value * factor + offset;
 }
 
-/** An SI value (Pa in the unit's own reference, K, kg, m³) in `unit`. */
+/** An SI value (Pa in the unit's own reference, K, kg, m³, m) in `unit`. */
 export function fromSi(si: number, unit: UnitId): number {
   const { factor, offset = 0 } = UNITS[unit] as Unit;
   return (si - offset) / factor;

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { HIGHEST_M, LOWEST_M } from '#app/domain/atmosphere/atmosphere.ts';
 import type { ProofVerdict } from '#app/domain/chain/evidence.ts';
 import {
   analyseHoldTest,
@@ -9,15 +10,16 @@ import {
 } from '#app/domain/hold-test/hold-test.ts';
 import type { Actor } from '#app/domain/permissions/actor.ts';
 import { refrigerantNamed } from '#app/domain/refrigerant/saturation.ts';
+import { toSi } from '#app/domain/units/units.ts';
 import { done, type Outcome, refuseFields } from '#app/features/outcome.ts';
 import { HOLD_GAUGES, type HoldGauge, holdTestOf } from '#app/features/reference/hold-input.ts';
 import { type Case, Circuit, HoldTest, Proof } from '#db/models/index.ts';
 import { changeCase } from './change-case.server.ts';
 import { COMPUTED_PROOFS } from './computed-proofs.ts';
 import { gatesBeforeEvacuation, passGates } from './gates.server.ts';
-import { number } from './typed-number.ts';
+import { ALTITUDE_UNITS, celsius, number, TEMPERATURE_UNITS, unitOf } from './typed-number.ts';
 
-export const holdTestSchema = z.object({
+const holdTestForm = z.object({
   samples: z
     .string({ error: 'Write the readings.' })
     .trim()
@@ -26,10 +28,24 @@ export const holdTestSchema = z.object({
   gauge: z.enum(HOLD_GAUGES, { error: 'Choose the gauge.' }),
   step: number(0.001, 1000, 'Use 0.001 to 1,000.'),
   litres: number(0.01, 1000, 'Use 0.01 to 1,000 litres.'),
-  ambient: number(-40, 80, 'Use −40 to 80 °C.'),
-  altitude: number(-500, 6000, 'Use −500 to 6,000 m.'),
+  ambient: number(-40, 176, 'Use −40 to 80 °C.'),
+  ambientUnit: unitOf(TEMPERATURE_UNITS),
+  altitude: number(-1640, 19_685, 'Use −500 to 6,000 m.'),
+  altitudeUnit: unitOf(ALTITUDE_UNITS),
   note: z.string().trim().max(20_000, 'Use at most 20,000 characters.').default(''),
 });
+
+export const holdTestSchema = holdTestForm
+  .transform(({ ambient, ambientUnit, altitude, altitudeUnit, ...rest }) => ({
+    ...rest,
+    ambient: celsius(ambient, ambientUnit),
+    altitude: toSi(altitude, altitudeUnit),
+  }))
+  .refine(({ ambient }) => ambient <= 80, { path: ['ambient'], message: 'Use −40 to 80 °C, −40 to 176 °F.' })
+  .refine(({ altitude }) => altitude >= LOWEST_M && altitude <= HIGHEST_M, {
+    path: ['altitude'],
+    message: 'Use −500 to 6,000 m, −1,640 to 19,685 ft.',
+  });
 export type HoldTestInput = z.infer<typeof holdTestSchema>;
 
 const AS_PROOF: Record<HoldVerdict, ProofVerdict> = {

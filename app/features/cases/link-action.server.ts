@@ -8,7 +8,7 @@ import { type Outcome, type Refusal, refuseFields } from '../outcome.ts';
 import { saveNotes } from './commands.server.ts';
 import { addEntry, changeEntry, removeEntry } from './entries.server.ts';
 import { addHoldTest, holdTestSchema } from './hold-tests.server.ts';
-import { addPressureTest, pressureTestSchema } from './pressure-tests.server.ts';
+import { addPressureTest, gaugeTestSchema, ramTestSchema } from './pressure-tests.server.ts';
 import { ENTRY_LINKS, ENTRY_SCHEMAS, type EntryKind, type NotedLink, notesSchema } from './schema.ts';
 
 export type LinkActionData = {
@@ -41,7 +41,7 @@ export async function handleLinkAction({ viewer, number, link, form }: Args) {
     return answer(outcome, { form: 'hold-test', typed }, number, link, 'Hold test recorded.');
   }
   if (intent === 'pressure-test' && link === 'proof') {
-    const parsed = pressureTestSchema.safeParse(formObject(form));
+    const parsed = (form.has('bore') ? ramTestSchema : gaugeTestSchema).safeParse(formObject(form));
     const outcome = parsed.success
       ? await orRefuse(addPressureTest({ actor: viewer, number, input: parsed.data }))
       : refuseFields(fieldErrors(parsed.error));

@@ -9,6 +9,8 @@ import { readForm } from '#app/server/forms.server.ts';
 import { orRefuse, requireActor, wholeParam } from '#app/server/guards.server.ts';
 import { requireOnCase } from './change-case.server.ts';
 import { linkChoices } from './choices.ts';
+import { circuitVolume } from './circuit-volume.server.ts';
+import { pressureTestFor } from './computed-proofs.ts';
 import { listHoldTests } from './hold-tests.server.ts';
 import { handleLinkAction } from './link-action.server.ts';
 import { loadLinks } from './link-views.server.ts';
@@ -43,7 +45,9 @@ export async function linkLoader({ context, params }: Args, link: NotedLink) {
     cautions: link === 'readings' ? [] : cautionsFor(link, row.medium),
     usualProofs: link === 'proof' ? usualProofs(row.medium) : [],
     spoken,
-    pressureUnit: preferredUnits(viewer.preferences).pressure,
+    units: preferredUnits(viewer.preferences),
+    volume: circuitVolume(circuit),
+    pressureTest: link === 'proof' ? pressureTestFor(row.medium) : null,
     mayOverride: may(viewer.role, 'gate:override'),
     holdTests: link === 'proof' ? await listHoldTests(row) : [],
     remainderUnknown:

@@ -6,6 +6,7 @@ import { analyseStanding, type StandingAnalysis } from '#app/domain/readings/sta
 import { refrigerantNamed, subcoolingK, superheatK } from '#app/domain/refrigerant/saturation.ts';
 import { toSi } from '#app/domain/units/units.ts';
 import { type Case, Circuit, Yard } from '#db/models/index.ts';
+import { circuitVolume } from './circuit-volume.server.ts';
 import type { Evidence } from './evidence.server.ts';
 
 const ZERO_C = 273.15;
@@ -72,7 +73,7 @@ export async function readingsSpeak(
       altitudeM,
       gaugeErrorPa: GAUGE_ERROR_PA,
       thermometerErrorK: THERMOMETER_ERROR_K,
-      volumeM3: null,
+      volumeM3: circuitVolume(circuit).litres / 1000,
     });
   }
   const [lowPa, highPa] = [gaugePa('low-side-pressure'), gaugePa('high-side-pressure')];

@@ -2,6 +2,7 @@ import { useSearchParams } from 'react-router';
 import { PhotoSection } from '#app/components/photos/photo-section.tsx';
 import { Cautions } from '#app/components/ui/notice.tsx';
 import { Panel } from '#app/components/ui/panel.tsx';
+import { fromSi } from '#app/domain/units/units.ts';
 import { AddEntry, EntryList } from '#app/features/cases/components/entries.tsx';
 import { HoldTestForm } from '#app/features/cases/components/hold-test-form.tsx';
 import { LinkFrame } from '#app/features/cases/components/link-frame.tsx';
@@ -18,6 +19,8 @@ export const action = (args: Route.ActionArgs) => linkAction(args, 'proof');
 export default function Proof({ loaderData, actionData }: Route.ComponentProps) {
   const { links, choices, mayEdit, photos, number, cautions, medium, holdTests, spoken } = loaderData;
   const editing = editedEntry(useSearchParams()[0], 'proof');
+  const { ambientC } = spoken;
+  const ambient = ambientC === null ? '' : fromSi(ambientC + 273.15, loaderData.units.temperature).toFixed(0);
   const shared = { choices, version: links.versions.proof ?? 1, actionData };
   return (
     <LinkFrame lacks={loaderData.lacks}>
@@ -48,8 +51,17 @@ export default function Proof({ loaderData, actionData }: Route.ComponentProps) 
             kind="proof"
             title="Add a test"
             count={links.proofs.length}
-            open={links.proofs.length === 0}
+            open={links.proofs.length === 0 && loaderData.pressureTest === null}
             {...shared}
+          />
+        )}
+        {mayEdit && loaderData.pressureTest && (
+          <PressureTestForm
+            kind={loaderData.pressureTest}
+            actionData={actionData}
+            count={links.proofs.length}
+            ambient={ambient}
+            units={loaderData.units}
           />
         )}
       </Panel>
@@ -67,25 +79,19 @@ export default function Proof({ loaderData, actionData }: Route.ComponentProps) 
             ))}
           </ul>
           {mayEdit && (
-            <>
-              <HoldTestForm
-                key={holdTests.length}
-                number={number}
-                actionData={actionData}
-                count={holdTests.length}
-                mayOverride={loaderData.mayOverride}
-                start={{
-                  ambient: spoken.ambientC === null ? '' : spoken.ambientC.toFixed(0),
-                  altitude: String(spoken.altitudeM),
-                  litres: '3',
-                }}
-              />
-              <PressureTestForm
-                actionData={actionData}
-                count={links.proofs.length}
-                ambient={spoken.ambientC === null ? '' : spoken.ambientC.toFixed(0)}
-              />
-            </>
+            <HoldTestForm
+              key={holdTests.length}
+              number={number}
+              actionData={actionData}
+              count={holdTests.length}
+              mayOverride={loaderData.mayOverride}
+              start={{
+                ambient,
+                altitude: String(spoken.altitudeM),
+                volume: loaderData.volume,
+                temperatureUnits: choices.temperatureUnits,
+              }}
+            />
           )}
         </Panel>
       )}

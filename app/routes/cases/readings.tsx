@@ -41,7 +41,7 @@ export default function Readings({ loaderData, actionData }: Route.ComponentProp
           />
         )}
       </Panel>
-      <SpokenReadings spoken={loaderData.spoken} unit={loaderData.pressureUnit} />
+      <SpokenReadings spoken={loaderData.spoken} unit={loaderData.units.pressure} />
       <Panel title="In words">
         <NotesForm
           label="Notes on the readings"

@@ -5,21 +5,34 @@ import { Facts } from '#app/components/ui/panel.tsx';
 import { COMMON_PRACTICE, chargeWindow } from '#app/domain/charge/charge-window.ts';
 import { readRunning } from '#app/domain/readings/running.ts';
 import { REFRIGERANTS } from '#app/domain/refrigerant/saturation.ts';
+import { preferredUnits } from '#app/domain/units/preferences.ts';
 import { fromSi, toSi, UNITS } from '#app/domain/units/units.ts';
 import { cautionsFor } from '#app/domain/vocabulary/vocabulary.ts';
 import { Calculator } from '#app/features/reference/components/calculator.tsx';
-import { typedChoice, typedNumber } from '#app/features/reference/inputs.ts';
+import { MeasureInput } from '#app/features/reference/components/measure-input.tsx';
+import { typedCelsius, typedChoice, typedNumber } from '#app/features/reference/inputs.ts';
+import { requireActor } from '#app/server/guards.server.ts';
 import type { Route } from './+types/charge.ts';
 
 export const meta: Route.MetaFunction = () => [{ title: 'Charge · Weepmark' }];
 
 const PRESSURE_UNITS = ['psi', 'bar', 'kPa'] as const;
 
-export function loader({ url }: Route.LoaderArgs) {
+export function loader({ context, url }: Route.LoaderArgs) {
+  const own = preferredUnits(requireActor(context).preferences);
   const params = url.searchParams;
   const refrigerant = typedChoice(params, 'refrigerant', REFRIGERANTS);
-  const unit = typedChoice(params, 'unit', PRESSURE_UNITS);
-  const ambient = typedNumber(params, 'ambient', '27', -50, 80);
+  const unit = typedChoice(
+    params,
+    'unit',
+    [...PRESSURE_UNITS].sort((x, y) => Number(y === own.pressure) - Number(x === own.pressure)),
+  );
+  const ambient = typedCelsius(params, 'ambient', {
+    own: own.temperature,
+    otherwise: { C: '27', F: '80' },
+    least: -50,
+    most: 80,
+  });
   const low = typedNumber(params, 'low', '', -15, 1000);
   const high = typedNumber(params, 'high', '', -15, 6000);
   const found = ambient.value === null ? null : chargeWindow(refrigerant, ambient.value);
@@ -69,7 +82,7 @@ export default function Charge({ loaderData }: Route.ComponentProps) {
               />
               <LinePlot
                 title="Low against high side"
-                description={`The published window of ${refrigerant} at ${ambient.typed} °C as a box${reading ? ', and your pair of readings' : ''}.`}
+                description={`The published window of ${refrigerant} at ${ambient.typed} ${UNITS[ambient.unit].label} as a box${reading ? ', and your pair of readings' : ''}.`}
                 xLabel={`Low side, ${UNITS[unit].label}`}
                 yLabel={`High side, ${UNITS[unit].label}`}
                 curves={[{ name: 'origin', look: 'second', points: [{ x: 0, y: 0 }] }]}
@@ -107,13 +120,7 @@ export default function Charge({ loaderData }: Route.ComponentProps) {
         options={REFRIGERANTS.map((value) => ({ value, label: value }))}
         defaultValue={refrigerant}
       />
-      <TextField
-        name="ambient"
-        label="Air outside in °C"
-        inputMode="decimal"
-        defaultValue={ambient.typed}
-        error={ambient.error}
-      />
+      <MeasureInput name="ambient" label="Air outside" measure={ambient} />
       <TextField
         name="low"
         label="Low side, running"

@@ -3,27 +3,36 @@ import { Cautions, Notice } from '#app/components/ui/notice.tsx';
 import { HIGHEST_M, LOWEST_M } from '#app/domain/atmosphere/atmosphere.ts';
 import { analyseHoldTest, FEWEST_SAMPLES } from '#app/domain/hold-test/hold-test.ts';
 import { REFRIGERANTS } from '#app/domain/refrigerant/saturation.ts';
+import { preferredUnits } from '#app/domain/units/preferences.ts';
 import { UNITS } from '#app/domain/units/units.ts';
 import { cautionsFor } from '#app/domain/vocabulary/vocabulary.ts';
 import { Calculator } from '#app/features/reference/components/calculator.tsx';
 import { HoldResult } from '#app/features/reference/components/hold-result.tsx';
+import { MeasureInput } from '#app/features/reference/components/measure-input.tsx';
 import { HOLD_GAUGES, holdTestOf, USUAL_STEP } from '#app/features/reference/hold-input.ts';
-import { typedChoice, typedNumber } from '#app/features/reference/inputs.ts';
+import { typedAltitude, typedCelsius, typedChoice, typedNumber } from '#app/features/reference/inputs.ts';
+import { requireActor } from '#app/server/guards.server.ts';
 import type { Route } from './+types/hold-test.ts';
 
 export const meta: Route.MetaFunction = () => [{ title: 'Hold test · Weepmark' }];
 
 const EXAMPLE = '0 400\n2 441\n4 487\n6 530\n8 576\n10 622\n12 665\n14 711\n16 757\n18 802\n20 846';
 
-export function loader({ url }: Route.LoaderArgs) {
+export function loader({ context, url }: Route.LoaderArgs) {
+  const own = preferredUnits(requireActor(context).preferences).temperature;
   const params = url.searchParams;
   const gauge = typedChoice(params, 'gauge', HOLD_GAUGES);
   const refrigerant = typedChoice(params, 'refrigerant', REFRIGERANTS);
   const samples = (params.get('samples') ?? EXAMPLE).slice(0, 30_000).replaceAll('\r\n', '\n');
   const step = typedNumber(params, 'step', USUAL_STEP[gauge], 0.001, 1000);
   const litres = typedNumber(params, 'litres', '3', 0.01, 1000);
-  const ambient = typedNumber(params, 'ambient', '20', -40, 80);
-  const altitude = typedNumber(params, 'altitude', '0', LOWEST_M, HIGHEST_M);
+  const ambient = typedCelsius(params, 'ambient', {
+    own,
+    otherwise: { C: '20', F: '68' },
+    least: -40,
+    most: 80,
+  });
+  const altitude = typedAltitude(params, { temperature: own, least: LOWEST_M, most: HIGHEST_M });
   const complete =
     step.value !== null && litres.value !== null && ambient.value !== null && altitude.value !== null;
   const test = complete
@@ -66,7 +75,9 @@ export default function HoldTestPage({ loaderData }: Route.ComponentProps) {
         step.typed,
         litres.typed,
         ambient.typed,
+        ambient.unit,
         altitude.typed,
+        altitude.unit,
       ])}
       result={
         <>
@@ -109,20 +120,8 @@ export default function HoldTestPage({ loaderData }: Route.ComponentProps) {
         defaultValue={litres.typed}
         error={litres.error}
       />
-      <TextField
-        name="ambient"
-        label="Temperature in °C"
-        inputMode="decimal"
-        defaultValue={ambient.typed}
-        error={ambient.error}
-      />
-      <TextField
-        name="altitude"
-        label="Altitude in m"
-        inputMode="numeric"
-        defaultValue={altitude.typed}
-        error={altitude.error}
-      />
+      <MeasureInput name="ambient" label="Temperature" measure={ambient} />
+      <MeasureInput name="altitude" label="Altitude" measure={altitude} />
       <SelectField
         name="refrigerant"
         label="Refrigerant"

@@ -6,16 +6,25 @@ import {
   rollingAverageRate,
   THRESHOLDS,
 } from '#app/domain/leak-rate/leak-rate.ts';
+import { preferredUnits } from '#app/domain/units/preferences.ts';
 import { Calculator } from '#app/features/reference/components/calculator.tsx';
-import { typedNumber } from '#app/features/reference/inputs.ts';
+import { MeasureInput } from '#app/features/reference/components/measure-input.tsx';
+import { typedMeasure, typedNumber } from '#app/features/reference/inputs.ts';
+import { requireActor } from '#app/server/guards.server.ts';
 import type { Route } from './+types/leak-rate.ts';
 
 export const meta: Route.MetaFunction = () => [{ title: 'Leak rate · Weepmark' }];
 
-export function loader({ url }: Route.LoaderArgs) {
-  const charge = typedNumber(url.searchParams, 'charge', '1150', 0.001, 1e8);
-  const added = typedNumber(url.searchParams, 'added', '', 0, 1e8);
-  const year = typedNumber(url.searchParams, 'year', '', 0, 1e8);
+const MASS_UNITS = ['g', 'kg', 'oz', 'lb'] as const;
+type MassUnit = (typeof MASS_UNITS)[number];
+
+export function loader({ context, url }: Route.LoaderArgs) {
+  const own = preferredUnits(requireActor(context).preferences).mass;
+  const weight = (name: string, least: number, otherwise: Partial<Record<MassUnit, string>> = {}) =>
+    typedMeasure(url.searchParams, name, { units: MASS_UNITS, own, otherwise, least, most: 1e5 });
+  const charge = weight('charge', 1e-6, { g: '1150', kg: '1.15', oz: '40.6', lb: '2.54' });
+  const added = weight('added', 0);
+  const year = weight('year', 0);
   const days = typedNumber(url.searchParams, 'days', '', 0.5, 36_500);
   const known = charge.value !== null && added.value !== null && days.value !== null;
   return {
@@ -27,7 +36,7 @@ export function loader({ url }: Route.LoaderArgs) {
       ? {
           annualizing: annualizingRate(added.value ?? 0, charge.value ?? 1, days.value ?? 1),
           rolling: year.value === null ? null : rollingAverageRate([year.value], charge.value ?? 1),
-          grams: gramsLostPerYear(added.value ?? 0, days.value ?? 1),
+          grams: gramsLostPerYear((added.value ?? 0) * 1000, days.value ?? 1),
         }
       : null,
   };
@@ -38,7 +47,7 @@ export default function LeakRate({ loaderData: { charge, added, year, days, rate
     <Calculator
       title="Leak rate"
       lead="From what had to be added: in grams a year, and in per cent of the charge by the two methods of a rule that large plants fall under."
-      formKey={JSON.stringify([charge.typed, added.typed, year.typed, days.typed])}
+      formKey={JSON.stringify([charge, added, year, days.typed])}
       result={
         <>
           {rates ? (
@@ -70,20 +79,8 @@ export default function LeakRate({ loaderData: { charge, added, year, days, rate
         </>
       }
     >
-      <TextField
-        name="charge"
-        label="Full charge in g"
-        inputMode="decimal"
-        defaultValue={charge.typed}
-        error={charge.error}
-      />
-      <TextField
-        name="added"
-        label="Added this time in g"
-        inputMode="decimal"
-        defaultValue={added.typed}
-        error={added.error}
-      />
+      <MeasureInput name="charge" label="Full charge" measure={charge} />
+      <MeasureInput name="added" label="Added this time" measure={added} />
       <TextField
         name="days"
         label="Days since it was last added to"
@@ -91,14 +88,7 @@ export default function LeakRate({ loaderData: { charge, added, year, days, rate
         defaultValue={days.typed}
         error={days.error}
       />
-      <TextField
-        name="year"
-        label="Added in the past 365 days in g"
-        optional
-        inputMode="decimal"
-        defaultValue={year.typed}
-        error={year.error}
-      />
+      <MeasureInput name="year" label="Added in the past 365 days" optional measure={year} />
     </Calculator>
   );
 }

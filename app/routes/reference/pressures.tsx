@@ -1,4 +1,4 @@
-import { MeasureField, SelectField, TextField } from '#app/components/forms/field.tsx';
+import { MeasureField, SelectField } from '#app/components/forms/field.tsx';
 import { LinePlot } from '#app/components/plots/line-plot.tsx';
 import { Notice } from '#app/components/ui/notice.tsx';
 import { Facts } from '#app/components/ui/panel.tsx';
@@ -12,7 +12,8 @@ import {
 import { preferredUnits } from '#app/domain/units/preferences.ts';
 import { fromSi, toSi, UNITS } from '#app/domain/units/units.ts';
 import { Calculator } from '#app/features/reference/components/calculator.tsx';
-import { typedChoice, typedNumber } from '#app/features/reference/inputs.ts';
+import { MeasureInput } from '#app/features/reference/components/measure-input.tsx';
+import { typedAltitude, typedChoice, typedNumber } from '#app/features/reference/inputs.ts';
 import { requireActor } from '#app/server/guards.server.ts';
 import type { Route } from './+types/pressures.ts';
 
@@ -31,7 +32,11 @@ export function loader({ context, url }: Route.LoaderArgs) {
   const pressureUnit = typedChoice(params, 'pressureUnit', first(PRESSURE_UNITS, own.pressure));
   const temperatureUnit = typedChoice(params, 'temperatureUnit', first(TEMPERATURE_UNITS, own.temperature));
   const temperature = typedNumber(params, 'temperature', temperatureUnit === 'C' ? '20' : '70', -60, 300);
-  const altitude = typedNumber(params, 'altitude', '0', LOWEST_M, HIGHEST_M);
+  const altitude = typedAltitude(params, {
+    temperature: own.temperature,
+    least: LOWEST_M,
+    most: HIGHEST_M,
+  });
   const airPa = airPressurePa(altitude.value ?? 0);
   const gauge = (pascals: number) => fromSi(pascals - airPa, pressureUnit);
   const celsius = temperature.value === null ? null : toSi(temperature.value, temperatureUnit) - 273.15;
@@ -178,13 +183,7 @@ export default function Pressures({ loaderData }: Route.ComponentProps) {
         defaultUnit={temperatureUnit}
         error={temperature.error ?? error}
       />
-      <TextField
-        name="altitude"
-        label="Altitude in m"
-        inputMode="numeric"
-        defaultValue={altitude.typed}
-        error={altitude.error}
-      />
+      <MeasureInput name="altitude" label="Altitude" measure={altitude} />
       <SelectField
         name="pressureUnit"
         label="Gauge"

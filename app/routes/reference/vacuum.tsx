@@ -1,20 +1,32 @@
-import { TextField } from '#app/components/forms/field.tsx';
 import { LinePlot } from '#app/components/plots/line-plot.tsx';
 import { Facts } from '#app/components/ui/panel.tsx';
 import { airPressurePa, HIGHEST_M, LOWEST_M } from '#app/domain/atmosphere/atmosphere.ts';
+import { preferredUnits } from '#app/domain/units/preferences.ts';
 import { fromSi } from '#app/domain/units/units.ts';
 import { waterVapourPa } from '#app/domain/water/vapour-pressure.ts';
 import { Calculator } from '#app/features/reference/components/calculator.tsx';
-import { typedNumber } from '#app/features/reference/inputs.ts';
+import { MeasureInput } from '#app/features/reference/components/measure-input.tsx';
+import { typedAltitude, typedCelsius } from '#app/features/reference/inputs.ts';
+import { requireActor } from '#app/server/guards.server.ts';
 import type { Route } from './+types/vacuum.ts';
 
 export const meta: Route.MetaFunction = () => [{ title: 'Vacuum and altitude · Weepmark' }];
 
 const inHg = (pascals: number) => -fromSi(pascals, 'inHg');
 
-export function loader({ url }: Route.LoaderArgs) {
-  const altitude = typedNumber(url.searchParams, 'altitude', '0', LOWEST_M, HIGHEST_M);
-  const ambient = typedNumber(url.searchParams, 'ambient', '20', -40, 80);
+export function loader({ context, url }: Route.LoaderArgs) {
+  const own = preferredUnits(requireActor(context).preferences).temperature;
+  const altitude = typedAltitude(url.searchParams, {
+    temperature: own,
+    least: LOWEST_M,
+    most: HIGHEST_M,
+  });
+  const ambient = typedCelsius(url.searchParams, 'ambient', {
+    own,
+    otherwise: { C: '20', F: '68' },
+    least: -40,
+    most: 80,
+  });
   const air = altitude.value === null ? null : airPressurePa(altitude.value);
   return {
     altitude,
@@ -36,7 +48,7 @@ export default function Vacuum({
     <Calculator
       title="Vacuum and altitude"
       lead="How deep a vacuum gauge can go here: no deeper than the air outside weighs. And the pressure below which water boils off."
-      formKey={`${altitude.typed} ${ambient.typed}`}
+      formKey={[altitude.typed, altitude.unit, ambient.typed, ambient.unit].join(' ')}
       result={
         <>
           <Facts
@@ -71,20 +83,8 @@ export default function Vacuum({
         </>
       }
     >
-      <TextField
-        name="altitude"
-        label="Altitude in m"
-        inputMode="numeric"
-        defaultValue={altitude.typed}
-        error={altitude.error}
-      />
-      <TextField
-        name="ambient"
-        label="Circuit’s temperature in °C"
-        inputMode="decimal"
-        defaultValue={ambient.typed}
-        error={ambient.error}
-      />
+      <MeasureInput name="altitude" label="Altitude" measure={altitude} />
+      <MeasureInput name="ambient" label="Circuit’s temperature" measure={ambient} />
     </Calculator>
   );
 }

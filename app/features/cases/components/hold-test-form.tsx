@@ -1,7 +1,8 @@
 import { useState } from 'react';
 import { Form, useNavigation } from 'react-router';
-import { SelectField, TextArea, TextField } from '#app/components/forms/field.tsx';
+import { MeasureField, type Option, SelectField, TextArea, TextField } from '#app/components/forms/field.tsx';
 import { Button } from '#app/components/ui/button.tsx';
+import type { VolumeEstimate } from '#app/domain/charge/circuit-volume.ts';
 import { UNITS } from '#app/domain/units/units.ts';
 import { HOLD_GAUGES } from '#app/features/reference/hold-input.ts';
 import type { LinkActionData } from '../link-action.server.ts';
@@ -13,7 +14,7 @@ type Props = {
   number: number;
   actionData: LinkActionData | undefined;
   count: number;
-  start: { ambient: string; altitude: string; litres: string };
+  start: { ambient: string; altitude: string; volume: VolumeEstimate; temperatureUnits: Option[] };
   mayOverride: boolean;
 };
 
@@ -65,13 +66,28 @@ export function HoldTestForm({ number, actionData, count, start, mayOverride }: 
           />
           <TextField {...field('step', '1')} label="Smallest step you can read" inputMode="decimal" />
           <TextField
-            {...field('litres', start.litres)}
+            {...field('litres', String(start.volume.litres))}
             label="Circuit’s volume in litres"
-            hint="An estimate unless the maker gives it."
+            hint={`${start.volume.basis} Use the maker’s figure where there is one.`}
             inputMode="decimal"
           />
-          <TextField {...field('ambient', start.ambient)} label="Temperature in °C" inputMode="decimal" />
-          <TextField {...field('altitude', start.altitude)} label="Altitude in m" inputMode="numeric" />
+          <MeasureField
+            {...field('ambient', start.ambient)}
+            unitName="ambientUnit"
+            label="Temperature"
+            units={start.temperatureUnits}
+            defaultUnit={mine?.typed.ambientUnit}
+          />
+          <MeasureField
+            {...field('altitude', start.altitude)}
+            unitName="altitudeUnit"
+            label="Altitude"
+            units={[
+              { value: 'm', label: UNITS.m.label },
+              { value: 'ft', label: UNITS.ft.label },
+            ]}
+            defaultUnit={mine?.typed.altitudeUnit}
+          />
         </div>
         <TextArea {...field('note')} label="In words" optional rows={2} />
         <Button name="intent" value="hold-test" pending={pending}>
