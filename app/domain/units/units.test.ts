@@ -1,6 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import published from '#tests/reference/units.json' with { type: 'json' };
-import { fromSi, parseTypedNumber, toSi, UNITS, type UnitId, unitsOf } from './units.ts';
+import { fromSi, isUnit, parseTypedNumber, toSi, UNITS, type UnitId, unitLabel, unitsOf } from './units.ts';
 
 const worked = new Map(published.worked_examples.map(({ question, answer }) => [question, answer]));
 
@@ -38,10 +38,30 @@ describe('units', () => {
   });
 
   test('every unit goes to SI and back', () => {
-    for (const quantity of ['pressure', 'temperature', 'mass', 'volume'] as const) {
+    for (const quantity of ['pressure', 'temperature', 'mass', 'volume', 'length'] as const) {
       for (const unit of unitsOf(quantity)) expect(fromSi(toSi(12.5, unit), unit)).toBeCloseTo(12.5, 9);
     }
   });
+});
+
+test('each quantity has its own units', () => {
+  expect(unitsOf('pressure')).toEqual(['psi', 'bar', 'kPa', 'inHg', 'micron', 'mbar']);
+  expect(unitsOf('temperature')).toEqual(['C', 'F']);
+  expect(unitsOf('mass')).toEqual(['g', 'kg', 'oz', 'lb']);
+  expect(unitsOf('volume')).toEqual(['ml', 'l', 'floz', 'gal']);
+  expect(unitsOf('length')).toEqual(['m', 'ft', 'mm', 'in']);
+});
+
+test('a unit is known by its id; what is no unit is shown as it is', () => {
+  expect([isUnit('psi'), isUnit('toString'), isUnit('')]).toEqual([true, false, false]);
+  expect([unitLabel('inHg'), unitLabel('furlong')]).toEqual(['inHg vacuum', 'furlong']);
+});
+
+/** The international foot and inch are exact by definition (NIST SP 811, appendix B.8). */
+test('lengths', () => {
+  expect(toSi(1, 'ft')).toBeCloseTo(0.3048, 12);
+  expect(toSi(1, 'in')).toBeCloseTo(0.0254, 12);
+  expect(toSi(12, 'in')).toBeCloseTo(toSi(1, 'ft'), 12);
 });
 
 describe('typed numbers', () => {
@@ -56,6 +76,16 @@ describe('typed numbers', () => {
     ['0,250', 0.25],
     ['1 150', 1150],
     ['12,345.6', 12345.6],
+    ['1,234,567', 1234567],
+    ['1,234.56', 1234.56],
+    [' 7 ', 7],
+    ['12.', 12],
+    ['120,', 120],
+    ['+5', 5],
+    ['-1,150', -1150],
+    ['-0,250', -0.25],
+    ['10,150', 10150],
+    ['12.75', 12.75],
   ])('%s', (typed, value) => expect(parseTypedNumber(typed)).toBe(value));
 
   test.each(['', 'abc', '1.2.3', '12 psi', '1e3', 'Infinity', '--3', ','])('%j is no number', (typed) =>

@@ -51,7 +51,7 @@ export default function Proof({ loaderData, actionData }: Route.ComponentProps) 
             kind="proof"
             title="Add a test"
             count={links.proofs.length}
-            open={links.proofs.length === 0 && loaderData.pressureTest === null}
+            open={links.proofs.length === 0}
             {...shared}
           />
         )}
