@@ -87,13 +87,13 @@ describe('the ways a vacuum may run', () => {
   });
 
   test('levelling out: its plateau and time constant', () => {
-    const { levelling, levelled, best } = modelsOf((time) => 1600 - 1500 * Math.exp(-time / 300));
+    const { flat, levelling, levelled, best } = modelsOf((time) => 1600 - 1500 * Math.exp(-time / 300));
     expect(levelling?.plateauPa).toBeCloseTo(1600, 0);
     expect((levelling?.tauSeconds ?? 0) / 300).toBeCloseTo(1, 2);
     expect(levelling?.fitted[0]).toBeCloseTo(100, 0);
     expect(levelling?.fitted[5]).toBeCloseTo(1600 - 1500 * Math.exp(-1), 0);
     expect((levelled?.tauSeconds ?? 0) / (levelling?.tauSeconds ?? 1)).toBeCloseTo(1, 3);
-    expect(best.fitted).toEqual(levelling?.fitted);
+    expect(best.rss).toBeLessThan(0.01 * flat.rss);
   });
 
   test('a slow one levels out of sight, so what has levelled by the end fits worse', () => {
