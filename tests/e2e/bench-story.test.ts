@@ -100,5 +100,5 @@ test('recovery, repair, hold test, a charge refused and then allowed, and the in
   await office.getByText('Entered in the book.').waitFor();
   await office.getByText('The book balances').waitFor();
   const csv = await (await office.request.get('/refrigerant/export.csv?machine=W04')).text();
-  expect(csv).toMatch(new RegExp(`charged,R-134a,1150,Cylinder 5,W04,${number},`));
+  expect(csv).toMatch(new RegExp(`charged,R-134a,1150,,Cylinder 5,W04,[^,]+,? ?[^,]*,${number},`));
 });

@@ -178,6 +178,20 @@ describe('the book', () => {
     expect(await held()).toBe(0);
   });
 
+  test('several refrigerants are kept apart, and all balance', async () => {
+    const made = await addCylinder(shop.office, { label: 'C7', refrigerant: 'R-1234yf', kind: 'new' }, now);
+    await move('bought', '1000');
+    await move('bought', '700', { cylinder: String(made.ok ? made.value.id : 0) });
+    const { whereabouts, outOfBalanceGrams } = await loadStock(shop.tech);
+    expect(outOfBalanceGrams).toBe(0);
+    expect(
+      whereabouts.map(({ refrigerant, places }) => [refrigerant, places[0]?.grams, places[1]?.grams]),
+    ).toEqual([
+      ['R-1234yf', 700, 700],
+      ['R-134a', 1000, 1000],
+    ]);
+  });
+
   test('an opening moves nothing and marks the cylinder', async () => {
     await move('bought', '1000');
     await move('opened', '');

@@ -137,6 +137,14 @@ export function nameOf(vocabulary: Vocabulary, kind: CatalogueKind, id: string):
   return entry(vocabulary, kind, id)?.name ?? capital(spelledOut(id));
 }
 
+/** What a circuit is called: its own label, else the name of its place. */
+export function circuitName(
+  vocabulary: Vocabulary,
+  { label, place }: { label: string; place: string },
+): string {
+  return label || nameOf(vocabulary, 'circuit', place);
+}
+
 /** The names of a medium's parts by id, for the circuit drawing. */
 export function partNames(vocabulary: Vocabulary, medium: string): Record<string, string> {
   return Object.fromEntries(entriesFor(vocabulary, 'component', medium).map(({ id, name }) => [id, name]));

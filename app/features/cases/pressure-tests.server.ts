@@ -1,3 +1,4 @@
+import type { Transaction } from 'sequelize';
 import { z } from 'zod';
 import { airPressurePa } from '#app/domain/atmosphere/atmosphere.ts';
 import {
@@ -90,7 +91,8 @@ export async function addPressureTest({
       if (kind === null || (kind === 'ram') !== 'bore' in input) {
         return refuseFields({ '': 'This medium is not proved in this way.' });
       }
-      const worked = 'bore' in input ? ramWords(input) : gaugeWords(input, kind, await altitudeOf(row));
+      const worked =
+        'bore' in input ? ramWords(input) : gaugeWords(input, kind, await altitudeOf(row, transaction));
       Object.assign(detail, { verdict: worked.verdict, kind });
       const { verdict, words, ...entered } = worked;
       await Proof.create(
@@ -113,8 +115,8 @@ export async function addPressureTest({
   });
 }
 
-async function altitudeOf({ yardId }: Case): Promise<number> {
-  return yardId === null ? 0 : ((await Yard.findByPk(yardId))?.altitudeM ?? 0);
+async function altitudeOf({ yardId }: Case, transaction: Transaction): Promise<number> {
+  return yardId === null ? 0 : ((await Yard.findByPk(yardId, { transaction }))?.altitudeM ?? 0);
 }
 
 function gaugeWords(input: GaugeTestInput, kind: PressureTestKind, altitudeM: number): Worked {

@@ -1,7 +1,7 @@
 import { Op, QueryTypes, type WhereOptions } from 'sequelize';
 import { CASE_STATE_NAMES, type CaseState, type ChainLink } from '#app/domain/chain/chain.ts';
 import type { Actor } from '#app/domain/permissions/actor.ts';
-import { mediumName, nameOf } from '#app/domain/vocabulary/vocabulary.ts';
+import { circuitName, mediumName } from '#app/domain/vocabulary/vocabulary.ts';
 import { shopVocabulary } from '#app/features/catalogue/queries.server.ts';
 import { sequelize } from '#db/connection.server.ts';
 import {
@@ -167,7 +167,7 @@ export async function loadCaseHead(actor: Actor, number: number) {
       label: `${machine.make} ${machine.model}`.trim(),
       kind: machine.kind,
     },
-    circuit: { id: circuit.id, name: circuit.label || nameOf(vocabulary, 'circuit', circuit.place) },
+    circuit: { id: circuit.id, name: circuitName(vocabulary, circuit) },
     yardName: yard?.name ?? '',
     openedAt: row.openedAt.toISOString(),
     technicianName: row.technicianName,

@@ -1,7 +1,7 @@
 import { QueryTypes } from 'sequelize';
 import type { Actor } from '#app/domain/permissions/actor.ts';
 import { unitLabel } from '#app/domain/units/units.ts';
-import { mediumName, nameOf } from '#app/domain/vocabulary/vocabulary.ts';
+import { circuitName, mediumName, nameOf } from '#app/domain/vocabulary/vocabulary.ts';
 import { shopVocabulary } from '#app/features/catalogue/queries.server.ts';
 import { NotFound } from '#app/features/outcome.ts';
 import { sequelize } from '#db/connection.server.ts';
@@ -99,7 +99,7 @@ export async function loadMachine(actor: Actor, machineId: number) {
     version: machine.version,
     circuits: circuits.map((circuit) => ({
       id: circuit.id,
-      name: circuit.label || nameOf(vocabulary, 'circuit', circuit.place),
+      name: circuitName(vocabulary, circuit),
       place: nameOf(vocabulary, 'circuit', circuit.place),
       mediumName: mediumName(vocabulary, circuit.medium),
       refrigerant: circuit.refrigerant,
@@ -154,7 +154,7 @@ export async function listCircuitChoices(actor: Actor, machineId: number) {
   const vocabulary = await shopVocabulary(actor.shopId);
   return circuits.map(({ id, label, place, medium }) => ({
     value: String(id),
-    label: `${label || nameOf(vocabulary, 'circuit', place)}, ${mediumName(vocabulary, medium).toLowerCase()}`,
+    label: `${circuitName(vocabulary, { label, place })}, ${mediumName(vocabulary, medium).toLowerCase()}`,
   }));
 }
 
@@ -175,7 +175,7 @@ export async function listCircuitsByMachine(actor: Actor) {
   const byMachine: Record<string, { value: string; label: string; medium: string }[]> = {};
   for (const { number, id, label, place, medium } of rows) {
     const circuits = byMachine[number.toLowerCase()] ?? [];
-    const name = label || nameOf(vocabulary, 'circuit', place);
+    const name = circuitName(vocabulary, { label, place });
     circuits.push({
       value: String(id),
       label: `${name}, ${mediumName(vocabulary, medium).toLowerCase()}`,

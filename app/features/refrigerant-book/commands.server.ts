@@ -2,7 +2,9 @@ import type { Transaction } from 'sequelize';
 import type { Actor } from '#app/domain/permissions/actor.ts';
 import { type Action, may } from '#app/domain/permissions/matrix.ts';
 import { type CylinderKind, NEEDS_MACHINE } from '#app/domain/refrigerant-book/book.ts';
+import { circuitName, type Vocabulary } from '#app/domain/vocabulary/vocabulary.ts';
 import { recordAudit } from '#app/features/audit/audit.server.ts';
+import { shopVocabulary } from '#app/features/catalogue/queries.server.ts';
 import {
   done,
   type FieldErrors,
@@ -51,8 +53,11 @@ export async function addMovement(
   now: Date,
 ): Promise<Outcome<{ id: number }>> {
   requireMay(actor, 'book:write');
+  const vocabulary = await shopVocabulary(actor.shopId);
   return transact(async (transaction) => {
-    const circuit = NEEDS_MACHINE[input.kind] ? await namedCircuit(actor, input, transaction) : null;
+    const circuit = NEEDS_MACHINE[input.kind]
+      ? await namedCircuit(actor, input, vocabulary, transaction)
+      : null;
     if (circuit && !(circuit instanceof Circuit)) return refuseFields(circuit);
     const { kind, cylinder, certificate, note } = input;
     const grams = gramsOf(input.amount, input.unit);
@@ -67,6 +72,7 @@ export async function addMovement(
 async function namedCircuit(
   actor: Actor,
   { machine: machineNumber, circuit: name }: MovementInput,
+  vocabulary: Vocabulary,
   transaction: Transaction,
 ): Promise<Circuit | FieldErrors> {
   const { shopId } = actor;
@@ -81,11 +87,13 @@ async function namedCircuit(
   const chosen =
     wanted === '' && circuits.length === 1
       ? circuits[0]
-      : circuits.find(({ label }) => label.toLowerCase() === wanted);
+      : circuits.find((circuit) => circuitName(vocabulary, circuit).toLowerCase() === wanted);
   if (!chosen) {
     return circuits.length === 0
       ? { machine: 'This machine has no refrigerant circuit. Add it on the machine’s page.' }
-      : { circuit: `Which circuit: ${circuits.map(({ label }) => label).join(' or ')}?` };
+      : {
+          circuit: `Which circuit: ${circuits.map((circuit) => circuitName(vocabulary, circuit)).join(' or ')}?`,
+        };
   }
   const open = await Case.findOne({
     where: { circuitId: chosen.id, state: ['open', 'leak-found', 'repaired', 'proved-tight', 'parked'] },

@@ -1,5 +1,7 @@
 import { QueryTypes } from 'sequelize';
 import { type CircuitEvent, type LeakEstimate, leakEstimate } from '#app/domain/leak-rate/leak-history.ts';
+import { circuitName } from '#app/domain/vocabulary/vocabulary.ts';
+import { shopVocabulary } from '#app/features/catalogue/queries.server.ts';
 import { sequelize } from '#db/connection.server.ts';
 import { Circuit } from '#db/models/index.ts';
 
@@ -14,8 +16,12 @@ export async function loadLeakEstimates(
     where: { ...where, medium: 'refrigerant' },
     order: [['id', 'ASC']],
   });
+  const [first] = circuits;
+  if (!first) return [];
+  const vocabulary = await shopVocabulary(first.shopId);
   const estimates: CircuitLeaks[] = [];
-  for (const { id, label, plateChargeGrams } of circuits) {
+  for (const circuit of circuits) {
+    const { id, plateChargeGrams } = circuit;
     const replacements = { circuitId: id };
     const events = await sequelize.query<CircuitEvent>(
       `SELECT v.grams, v.at, v.kind FROM movements v LEFT JOIN movements r ON r.reversesId = v.id
@@ -33,7 +39,8 @@ export async function loadLeakEstimates(
       plateChargeGrams,
       now,
     );
-    if (estimate) estimates.push({ ...estimate, circuitId: id, circuitName: label });
+    if (estimate)
+      estimates.push({ ...estimate, circuitId: id, circuitName: circuitName(vocabulary, circuit) });
   }
   return estimates;
 }

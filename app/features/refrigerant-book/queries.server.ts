@@ -14,6 +14,8 @@ import {
   PLACES,
   placeOf,
 } from '#app/domain/refrigerant-book/book.ts';
+import { circuitName } from '#app/domain/vocabulary/vocabulary.ts';
+import { shopVocabulary } from '#app/features/catalogue/queries.server.ts';
 import { sequelize } from '#db/connection.server.ts';
 import { Cylinder, Movement, User } from '#db/models/index.ts';
 import type { BookInput } from './schema.ts';
@@ -40,7 +42,12 @@ export type MovementView = {
   reversed: boolean;
 };
 
-type Row = Omit<MovementView, 'at' | 'kindName' | 'reversed'> & { at: Date; reversedBy: number | null };
+type Row = Omit<MovementView, 'at' | 'kindName' | 'reversed' | 'circuitName'> & {
+  at: Date;
+  reversedBy: number | null;
+  label: string | null;
+  place: string | null;
+};
 
 function conditions(actor: Actor, { from, to, machine, person }: BookInput) {
   const where = ['v.shopId = :shopId'];
@@ -73,17 +80,19 @@ export async function listMovements(
     },
   );
   const rows = await sequelize.query<Row>(
-    `SELECT v.id, v.at, v.kind, v.refrigerant, v.grams, v.weighedGrams, COALESCE(k.label, '') AS circuitName, COALESCE(y.label, '') AS cylinderLabel, COALESCE(m.number, '') AS machineNumber,
+    `SELECT v.id, v.at, v.kind, v.refrigerant, v.grams, v.weighedGrams, k.label, k.place, COALESCE(y.label, '') AS cylinderLabel, COALESCE(m.number, '') AS machineNumber,
             c.number AS caseNumber, v.certificate, v.note, v.byName, v.reversesId AS reverses, r.id AS reversedBy
        FROM ${TABLES} WHERE ${sql} ORDER BY v.at DESC, v.id DESC LIMIT :limit OFFSET :offset`,
     { replacements: { ...values, limit, offset: (input.page - 1) * limit }, type: QueryTypes.SELECT },
   );
   const total = Number(count?.total ?? 0);
+  const vocabulary = await shopVocabulary(actor.shopId);
   return {
     total,
     pageCount: Math.ceil(total / limit),
-    movements: rows.map(({ at, reversedBy, ...row }) => ({
+    movements: rows.map(({ at, reversedBy, label, place, ...row }) => ({
       ...row,
+      circuitName: label === null || place === null ? '' : circuitName(vocabulary, { label, place }),
       at: at.toISOString(),
       kindName: MOVEMENT_KIND_NAMES[row.kind],
       reversed: reversedBy !== null,
@@ -102,6 +111,7 @@ export async function loadStock(actor: Actor) {
       GROUP BY account, refrigerant`,
     { replacements: { shopId }, type: QueryTypes.SELECT },
   );
+  /** A cylinder holds one refrigerant, so one row; suppliers have one for each. */
   const held = new Map(rows.map(({ account, held: grams }) => [account, Number(grams)]));
   const opened = await Movement.findAll({ where: { shopId, kind: 'opened' }, attributes: ['cylinderId'] });
   const isOpen = new Set(opened.map(({ cylinderId }) => cylinderId));
@@ -116,7 +126,7 @@ export async function loadStock(actor: Actor) {
     })),
     whereabouts: whereabouts(rows),
     /** Nothing when the book balances; otherwise by how much it does not. */
-    outOfBalanceGrams: [...held.values()].reduce((sum, grams) => sum + grams, 0),
+    outOfBalanceGrams: rows.reduce((sum, { held: grams }) => sum + Number(grams), 0),
     overdrawn: cylinders
       .filter(({ id }) => (held.get(cylinderAccount(id)) ?? 0) < 0)
       .map(({ label }) => label),
@@ -173,21 +183,23 @@ export async function loadCircuitBalances(actor: Actor, input: BookInput) {
   const { sql, values } = conditions(actor, input);
   const rows = await sequelize.query<{
     number: string;
-    circuit: string;
+    label: string;
+    place: string;
     plate: number | null;
     charged: number;
     recovered: number;
   }>(
-    `SELECT m.number, k.label AS circuit, k.plateChargeGrams AS plate,
+    `SELECT m.number, k.label, k.place, k.plateChargeGrams AS plate,
             SUM(IF(v.kind = 'charged', IF(v.reversesId IS NULL, v.grams, -v.grams), 0)) AS charged,
             SUM(IF(v.kind = 'recovered', IF(v.reversesId IS NULL, v.grams, -v.grams), 0)) AS recovered
        FROM movements v JOIN circuits k ON k.id = v.circuitId JOIN machines m ON m.id = k.machineId
-      WHERE ${sql} GROUP BY k.id, m.number, k.label, k.plateChargeGrams ORDER BY SUM(v.grams) DESC, m.number LIMIT 200`,
+      WHERE ${sql} GROUP BY k.id, m.number, k.label, k.place, k.plateChargeGrams ORDER BY SUM(v.grams) DESC, m.number LIMIT 200`,
     { replacements: values, type: QueryTypes.SELECT },
   );
-  return rows.map(({ number, circuit, plate, charged, recovered }) => ({
+  const vocabulary = await shopVocabulary(actor.shopId);
+  return rows.map(({ number, label, place, plate, charged, recovered }) => ({
     number,
-    circuit,
+    circuit: circuitName(vocabulary, { label, place }),
     charged: Number(charged),
     recovered: Number(recovered),
     plateGrams: plate === null ? null : Number(plate),

@@ -41,7 +41,15 @@ export function MovementTable({
           key: 'grams',
           label: 'Grams',
           numeric: true,
-          cell: ({ grams, reverses }) => `${reverses !== null ? '−' : ''}${grams.toLocaleString('en-GB')}`,
+          cell: ({ grams, reverses, weighedGrams }) => (
+            <span>
+              {reverses !== null && '−'}
+              {grams.toLocaleString('en-GB')}
+              {weighedGrams !== null && (
+                <span className="block text-sm text-muted">scale {weighedGrams.toLocaleString('en-GB')}</span>
+              )}
+            </span>
+          ),
         },
         {
           key: 'refrigerant',
@@ -50,10 +58,10 @@ export function MovementTable({
         },
         {
           key: 'machine',
-          label: 'Machine, case',
-          cell: ({ machineNumber, caseNumber }) => (
+          label: 'Machine, circuit, case',
+          cell: ({ machineNumber, circuitName, caseNumber }) => (
             <span>
-              {machineNumber}{' '}
+              {machineNumber} {circuitName && <span className="text-muted">{circuitName}</span>}{' '}
               {caseNumber !== null && (
                 <Link to={`/cases/${caseNumber}`} className="link">
                   {caseNumber}
