@@ -3,10 +3,17 @@ import { expect, test } from 'vitest';
 import {
   accountsOf,
   balances,
+  CYLINDER_KIND_NAMES,
+  CYLINDER_KINDS,
   circuitAccount,
   cylinderAccount,
+  leakedBeyondPlate,
+  MOVEMENT_KIND_NAMES,
   MOVEMENT_KINDS,
   type MovementKind,
+  NEEDS_MACHINE,
+  PLACE_NAMES,
+  PLACES,
   placeOf,
   weighing,
 } from './book.ts';
@@ -76,4 +83,25 @@ test('after a weighing the book says what the scale said', () => {
       expect(held.get(cylinderAccount(1))).toBe(scaleGrams);
     }),
   );
+});
+
+test.each([
+  [1150, 0, 1150, 0],
+  [2300, 540, 1150, 610],
+  [900, 540, 1150, 0],
+  [2300, 0, null, null],
+])('%d g in, %d g out, plate %s: %s g leaked for certain', (charged, recovered, plate, leaked) => {
+  expect(leakedBeyondPlate(charged, recovered, plate)).toBe(leaked);
+});
+
+test('only what goes into or comes out of a machine names one', () => {
+  expect(MOVEMENT_KINDS.filter((kind) => NEEDS_MACHINE[kind])).toEqual(['charged', 'recovered']);
+});
+
+test('everything has a name', () => {
+  expect(Object.keys(MOVEMENT_KIND_NAMES).sort()).toEqual([...MOVEMENT_KINDS].sort());
+  expect(Object.keys(CYLINDER_KIND_NAMES).sort()).toEqual([...CYLINDER_KINDS].sort());
+  expect(Object.keys(PLACE_NAMES).sort()).toEqual([...PLACES].sort());
+  expect(PLACES.map((place) => placeOf(`${place}:7`))).toEqual([...PLACES]);
+  expect(placeOf('nowhere')).toBe('lost');
 });

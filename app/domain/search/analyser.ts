@@ -17,14 +17,17 @@ const LONGEST_PHRASE = 5;
 const WORD = /[\p{L}\p{N}]+(?:[-/.'’&][\p{L}\p{N}]+)*/gu;
 
 /** How much a concept counts in a query beside the person's own word, which counts 1. */
-const CONCEPT_WEIGHT = 0.8;
-const PIECE_WEIGHT = 0.35;
+const CONCEPT_WEIGHT = 0.6;
+const PIECE_WEIGHT = 1;
+/** A letter code and the number after it, read as one. */
+const JOINED_WEIGHT = 0.35;
 const RELATED_IN_TEXT = 0;
 
 const STOP_WORDS = new Set(
-  'a an and are as at be been but by for from had has have he her his i if in into is it its me my of on or our she so than that the their them then there they this to up was we were when which who will with you your'.split(
-    ' ',
-  ),
+  (
+    'a an and are as at be been but by for from had has have he her his i if in into is it its me my of on or our she so than that the their them then there they this to up was we were when which who will with you your ' +
+    'about above again against all am any because being below between both can cannot could did do does doing during each few further here how just more most nor only other ought own same should some such through until very what where while why would may might must shall upon whether within without also many much per via etc among however thus therefore since although though either neither'
+  ).split(' '),
 );
 /** Words that carry meaning here although most lists stop them: "not cold", "no gas", "on and off". */
 const KEPT_IN_PHRASES = new Set([
@@ -145,13 +148,14 @@ export function analyse(text: string, medium?: string): Term[] {
   return termsOf(text, medium, false).map(({ term, weight }) => ({ term, weight }));
 }
 
-/** A query's terms, the strongest mention of each: the person's own words count 1, what they stand for less. */
+/** A query's terms: each mention of an own word counts 1, the strongest mention of what words stand for less. */
 export function analyseQuery(text: string, medium?: string): Term[] {
-  const strongest = new Map<string, number>();
+  const weights = new Map<string, number>();
   for (const { term, weight } of termsOf(text, medium, true)) {
-    strongest.set(term, Math.max(weight, strongest.get(term) ?? 0));
+    const before = weights.get(term) ?? 0;
+    weights.set(term, term.startsWith('~') ? Math.max(weight, before) : weight + before);
   }
-  return [...strongest].map(([term, weight]) => ({ term, weight }));
+  return [...weights].map(([term, weight]) => ({ term, weight }));
 }
 
 function termsOf(text: string, medium: string | undefined, isQuery: boolean): PlacedTerm[] {
@@ -168,7 +172,7 @@ function termsOf(text: string, medium: string | undefined, isQuery: boolean): Pl
     if (next && /^\d/.test(next.folded) && /^[a-z]{1,3}$/.test(folded) && !STOP_WORDS.has(folded)) {
       terms.push({
         term: (folded + next.whole).slice(0, LONGEST_TERM),
-        weight: PIECE_WEIGHT,
+        weight: JOINED_WEIGHT,
         start,
         end: next.end,
       });

@@ -35,7 +35,7 @@ export function rank(
   statistics: Statistics,
 ): Ranked[] {
   const first = score(query, candidates, statistics);
-  const feedback = feedbackTerms(query, first.slice(0, RANKING.feedbackDocuments), candidates, statistics);
+  const feedback = feedbackTerms(first.slice(0, RANKING.feedbackDocuments), candidates, statistics);
   if (feedback.length === 0) return first;
   const again = new Map(score(feedback, candidates, statistics).map(({ id, score: extra }) => [id, extra]));
   return first.map((hit) => ({ ...hit, score: hit.score + (again.get(hit.id) ?? 0) })).sort(byScore);
@@ -47,14 +47,14 @@ export function score(
   candidates: readonly Candidate[],
   statistics: Statistics,
 ): Ranked[] {
-  const { k1, b } = RANKING;
+  const { k1 } = RANKING;
   const weighed = query.map(({ term, weight }) => ({
     term,
     weight: weight * inverseFrequency(statistics.documentCount, statistics.documentFrequency(term)),
   }));
   const ranked: Ranked[] = [];
   for (const { id, length, terms } of candidates) {
-    const norm = k1 * (1 - b + (b * length) / Math.max(statistics.meanLength, 1));
+    const norm = lengthNorm(length, statistics.meanLength);
     const contributions: Ranked['contributions'] = [];
     let total = 0;
     for (const { term, weight } of weighed) {
@@ -71,33 +71,38 @@ export function score(
 }
 
 function feedbackTerms(
-  query: readonly Term[],
   best: readonly Ranked[],
   candidates: readonly Candidate[],
-  { documentCount, documentFrequency }: Statistics,
+  { documentCount, meanLength, documentFrequency }: Statistics,
 ): Term[] {
   if (best.length === 0) return [];
   const byId = new Map(candidates.map((candidate) => [candidate.id, candidate]));
-  const asked = new Set(query.map(({ term }) => term));
   const top = best[0]?.score || 1;
   const gathered = new Map<string, number>();
   for (const { id, score: reached } of best) {
     const document = byId.get(id);
-    for (const [term, frequency] of document?.terms ?? []) {
-      const share = (frequency / (frequency + RANKING.k1)) * (reached / top);
-      gathered.set(term, (gathered.get(term) ?? 0) + share / best.length);
+    if (!document) continue;
+    const norm = lengthNorm(document.length, meanLength);
+    for (const [term, frequency] of document.terms) {
+      const share = (frequency * (RANKING.k1 + 1)) / (frequency + norm);
+      gathered.set(term, (gathered.get(term) ?? 0) + (share * reached) / top);
     }
   }
   const telling = [...gathered]
-    .filter(([term, share]) => !asked.has(term) && share * best.length > 1)
     .map(([term, share]) => ({
       term,
-      share: share * inverseFrequency(documentCount, documentFrequency(term)),
-      raw: share,
+      share,
+      tells: share * inverseFrequency(documentCount, documentFrequency(term)),
     }))
-    .sort((x, y) => y.share - x.share)
+    .sort((x, y) => y.tells - x.tells)
     .slice(0, RANKING.feedbackTerms);
-  return telling.map(({ term, raw }) => ({ term, weight: RANKING.feedbackWeight * raw }));
+  const most = telling[0]?.share || 1;
+  return telling.map(({ term, share }) => ({ term, weight: (RANKING.feedbackWeight * share) / most }));
+}
+
+function lengthNorm(length: number, meanLength: number): number {
+  const { k1, b } = RANKING;
+  return k1 * (1 - b + (b * length) / Math.max(meanLength, 1));
 }
 
 function byScore(x: Ranked, y: Ranked): number {

@@ -7,10 +7,13 @@ import type { PhotoView } from '#app/features/photos/views.ts';
 import { cylinderChoices } from '#app/features/refrigerant-book/queries.server.ts';
 import { readForm } from '#app/server/forms.server.ts';
 import { orRefuse, requireActor, wholeParam } from '#app/server/guards.server.ts';
+import type { Circuit } from '#db/models/index.ts';
 import { requireOnCase } from './change-case.server.ts';
 import { linkChoices } from './choices.ts';
 import { circuitVolume } from './circuit-volume.server.ts';
 import { pressureTestFor } from './computed-proofs.ts';
+import type { Evidence } from './evidence.server.ts';
+import { chargedSinceRecovery } from './gates.server.ts';
 import { listHoldTests } from './hold-tests.server.ts';
 import { handleLinkAction } from './link-action.server.ts';
 import { loadLinks } from './link-views.server.ts';
@@ -55,7 +58,19 @@ export async function linkLoader({ context, params }: Args, link: NotedLink) {
       row.medium === 'refrigerant' &&
       !evidence.charges.some(({ kind }) => kind === 'recovered') &&
       !(spoken.standing && 'verdict' in spoken.standing && spoken.standing.verdict === 'empty'),
+    weights: link === 'charge' && row.medium === 'refrigerant' ? chargeWeights(circuit, evidence) : null,
     backToWorkAt: row.backToWorkAt?.toISOString() ?? null,
+  };
+}
+
+/** Grams by the plate and the entries: what came out, what went in since, what is still to go in. */
+function chargeWeights({ plateChargeGrams }: Circuit, evidence: Pick<Evidence, 'charges'>) {
+  const newest = evidence.charges.findLast(({ kind }) => kind === 'recovered');
+  const charged = chargedSinceRecovery(evidence);
+  return {
+    recoveredGrams: newest ? Math.round(newest.amountSi * 1000) : null,
+    chargedGrams: Math.round(charged),
+    toGoGrams: plateChargeGrams === null ? null : Math.round(plateChargeGrams - charged),
   };
 }
 

@@ -1,7 +1,8 @@
-import { useSearchParams } from 'react-router';
+import { Link, useSearchParams } from 'react-router';
 import { PhotoSection } from '#app/components/photos/photo-section.tsx';
 import { Cautions, Notice } from '#app/components/ui/notice.tsx';
 import { Facts, Panel } from '#app/components/ui/panel.tsx';
+import { fromSi, UNITS } from '#app/domain/units/units.ts';
 import { BackToWork } from '#app/features/cases/components/back-to-work.tsx';
 import { AddEntry, EntryList } from '#app/features/cases/components/entries.tsx';
 import { LinkFrame } from '#app/features/cases/components/link-frame.tsx';
@@ -14,7 +15,15 @@ export const loader = (args: Route.LoaderArgs) => linkLoader(args, 'charge');
 export const action = (args: Route.ActionArgs) => linkAction(args, 'charge');
 
 export default function Charge({ loaderData, actionData }: Route.ComponentProps) {
-  const { links, choices, mayEdit, photos, number, cautions } = loaderData;
+  const { links, choices, mayEdit, photos, number, cautions, weights, units, spoken } = loaderData;
+  const inMass = (grams: number | null) =>
+    grams === null
+      ? ''
+      : `${Number(fromSi(grams / 1000, units.mass).toPrecision(4))} ${UNITS[units.mass].label}`;
+  const windowAddress = `/reference/charge?${new URLSearchParams({
+    ...(spoken.refrigerant ? { refrigerant: spoken.refrigerant } : {}),
+    ...(spoken.ambientC === null ? {} : { ambient: spoken.ambientC.toFixed(0), ambientUnit: 'C' }),
+  })}`;
   const editing = editedEntry(useSearchParams()[0], 'charge');
   const shared = {
     choices,
@@ -36,6 +45,33 @@ export default function Charge({ loaderData, actionData }: Route.ComponentProps)
           { label: 'Service ports', value: links.plate.ports },
         ]}
       />
+      {weights && (
+        <Facts
+          columns={3}
+          facts={[
+            { label: 'Taken out last', value: inMass(weights.recoveredGrams) },
+            { label: 'Put in since', value: inMass(weights.chargedGrams) },
+            {
+              label: 'Still to go in by the plate',
+              value:
+                weights.toGoGrams !== null && weights.toGoGrams < 0
+                  ? `nothing: ${inMass(-weights.toGoGrams)} over`
+                  : inMass(weights.toGoGrams),
+            },
+          ]}
+        />
+      )}
+      {weights && (
+        <p className="max-w-prose text-sm text-muted">
+          By weight is the only sure way. What stays in the hoses is not in the circuit: purge them, and weigh
+          with them full. Add the oil that went with what came out and with each part renewed, as the maker
+          says (common practice, no source). By pressure only as a check:{' '}
+          <Link to={windowAddress} className="link">
+            the day’s window
+          </Link>
+          .
+        </p>
+      )}
       {!links.provedTight && (
         <Notice tone="warn" title="Not proved tight">
           <p>

@@ -1,18 +1,20 @@
+import { TextField } from '#app/components/forms/field.tsx';
 import { LinePlot } from '#app/components/plots/line-plot.tsx';
 import { Facts } from '#app/components/ui/panel.tsx';
 import { airPressurePa, HIGHEST_M, LOWEST_M } from '#app/domain/atmosphere/atmosphere.ts';
 import { preferredUnits } from '#app/domain/units/preferences.ts';
-import { fromSi } from '#app/domain/units/units.ts';
+import { fromSi, UNITS } from '#app/domain/units/units.ts';
 import { waterVapourPa } from '#app/domain/water/vapour-pressure.ts';
 import { Calculator } from '#app/features/reference/components/calculator.tsx';
 import { MeasureInput } from '#app/features/reference/components/measure-input.tsx';
-import { typedAltitude, typedCelsius } from '#app/features/reference/inputs.ts';
+import { typedAltitude, typedCelsius, typedNumber } from '#app/features/reference/inputs.ts';
 import { requireActor } from '#app/server/guards.server.ts';
 import type { Route } from './+types/vacuum.ts';
 
 export const meta: Route.MetaFunction = () => [{ title: 'Vacuum and altitude · Weepmark' }];
 
-const inHg = (pascals: number) => -fromSi(pascals, 'inHg');
+const INCH_PA = -UNITS.inHg.factor;
+const inHg = (pascals: number) => pascals / INCH_PA;
 
 export function loader({ context, url }: Route.LoaderArgs) {
   const own = preferredUnits(requireActor(context).preferences).temperature;
@@ -28,9 +30,17 @@ export function loader({ context, url }: Route.LoaderArgs) {
     most: 80,
   });
   const air = altitude.value === null ? null : airPressurePa(altitude.value);
+  const target = typedNumber(url.searchParams, 'target', '', 0, 32);
+  const beyond = air !== null && target.value !== null && target.value > inHg(air);
   return {
     altitude,
     ambient,
+    target: beyond
+      ? { ...target, error: `No gauge can get there here: use at most ${inHg(air).toFixed(1)} inHg.` }
+      : target,
+    /** Air that would be left at the target, in micron. */
+    leftMicron:
+      air === null || target.value === null || beyond ? null : fromSi(air - target.value * INCH_PA, 'micron'),
     airKPa: air === null ? null : air / 1000,
     deepestInHg: air === null ? null : inHg(air),
     waterMicron: ambient.value === null ? null : fromSi(waterVapourPa(ambient.value), 'micron'),
@@ -42,13 +52,13 @@ export function loader({ context, url }: Route.LoaderArgs) {
 }
 
 export default function Vacuum({
-  loaderData: { altitude, ambient, airKPa, deepestInHg, waterMicron, points },
+  loaderData: { altitude, ambient, target, leftMicron, airKPa, deepestInHg, waterMicron, points },
 }: Route.ComponentProps) {
   return (
     <Calculator
       title="Vacuum and altitude"
       lead="How deep a vacuum gauge can go here: no deeper than the air outside weighs. And the pressure below which water boils off."
-      formKey={[altitude.typed, altitude.unit, ambient.typed, ambient.unit].join(' ')}
+      formKey={[altitude.typed, altitude.unit, ambient.typed, ambient.unit, target.typed].join(' ')}
       result={
         <>
           <Facts
@@ -62,6 +72,13 @@ export default function Vacuum({
                 label: 'Water boils below',
                 value:
                   waterMicron === null ? '' : `${Math.round(waterMicron).toLocaleString('en-GB')} micron`,
+              },
+              {
+                label: 'Left inside at the target',
+                value:
+                  leftMicron === null
+                    ? ''
+                    : `${Math.round(leftMicron).toLocaleString('en-GB')} micron of air`,
               },
             ]}
           />
@@ -85,6 +102,14 @@ export default function Vacuum({
     >
       <MeasureInput name="altitude" label="Altitude" measure={altitude} />
       <MeasureInput name="ambient" label="Circuit’s temperature" measure={ambient} />
+      <TextField
+        name="target"
+        label="Target on a compound gauge, inHg"
+        optional
+        inputMode="decimal"
+        defaultValue={target.typed}
+        error={target.error}
+      />
     </Calculator>
   );
 }
